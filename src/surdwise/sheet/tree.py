@@ -81,18 +81,18 @@ class Measure:
     `kind` is one of length, dist, area, perimeter, circumradius, inradius, exradius,
     median, altitude, bisector, cos, sin.  `points` are its points in order (for
     exradius, median, altitude and bisector: the triangle, then the vertex; for dist: the
-    point alone, with the line in `line`).
+    point alone, which may be the centre of a circle, with the line in `line`).
     """
 
     kind: str
-    points: tuple[Pt, ...]
+    points: tuple[PointRef, ...]
     line: Curve | None = None
     span: Span = field(default=NOWHERE, compare=False)
 
 
 @dataclass(frozen=True)
 class Unary:
-    """`op` is one of neg, sqrt, abs."""
+    """`op` is one of neg, sqrt, abs (the reader puts the minus of a number into the Number)."""
 
     op: str
     arg: Quantity
@@ -101,7 +101,10 @@ class Unary:
 
 @dataclass(frozen=True)
 class Binary:
-    """`op` is one of + - * / ^ (the right side of ^ is an integer Number)."""
+    """`op` is one of + - * / ^ (the right side of ^ is an integer Number).
+
+    The reader makes one Number of an integer divided by an integer, as in `3/4`.
+    """
 
     op: str
     left: Quantity
@@ -124,7 +127,7 @@ class Comparison:
     span: Span = field(default=NOWHERE, compare=False)
 
 
-Arg = Pt | Named | Through | CentreOf | Number | tuple[Pt, ...] | str
+Arg = Pt | Named | Through | CentreOf | Quantity | tuple[Pt, ...] | str
 
 
 @dataclass(frozen=True)

@@ -1,0 +1,167 @@
+"""Open cells of parameter space by projection and lifting.
+
+Collins, "Quantifier elimination for real closed fields by cylindrical algebraic
+decomposition", 1975, in its open form (only full-dimensional cells): McCallum's projection
+(leading coefficients, discriminants, pairwise resultants of irreducible factors) suffices
+there, and every sample is rational.  Exact up to root isolation, which is certified.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Iterator
+from itertools import combinations
+
+from flint import fmpq
+
+from . import ring
+from .real import START_PREC, isolate, simplest_between
+from .ring import Poly, Rational
+
+Sample = dict[int, Rational]
+
+
+class TooManyCells(Exception):
+    """The decomposition outgrew its limit."""
+
+
+def never_zero(p: Poly, positive: frozenset[int]) -> bool:
+    """A cheap proof that p has no zero with the `positive` parameters positive: all its
+    coefficients have one sign and every monomial is a square times positive parameters, one
+    of them (a constant, say) having no zero.  False says nothing."""
+    sign = 0
+    safe = False
+    for mono, c in p.terms():
+        s = 1 if c > 0 else -1
+        if sign and s != sign:
+            return False
+        sign = s
+        exps = [(k, e) for k, e in enumerate(mono[ring.MAX_GENS :]) if e]
+        if any(e % 2 and k not in positive for k, e in exps):
+            return False
+        if all(k in positive for k, _ in exps):
+            safe = True
+    return safe
+
+
+def known_sign(p: Poly, positive: frozenset[int]) -> int:
+    """The sign of p where all `positive` parameters are positive, if `never_zero` can tell
+    it at a glance; 0 says nothing."""
+    if p.is_zero() or ring.has_gens(p) or not never_zero(p, positive):
+        return 0
+    return 1 if p.leading_coefficient() > 0 else -1
+
+
+def open_cells(
+    polys: Iterable[Poly], order: list[int], positive: frozenset[int], limit: int = 200_000
+) -> Iterator[Sample]:
+    """One rational sample in every open cell of the polynomials' complement.
+
+    `order` lists the parameters, first the one decided first; those in `positive` range over
+    (0, oo) only.  Raises TooManyCells past `limit` samples.
+    """
+    levels = project(polys, order, positive)
+    count = 0
+    for s in _lift(levels, order, positive, 0, {}):
+        count += 1
+        if count > limit:
+            raise TooManyCells(f"more than {limit} cells")
+        yield s
+
+
+def project(polys: Iterable[Poly], order: list[int], positive: frozenset[int]) -> list[list[Poly]]:
+    """Projection sets: levels[i] involves order[i] and only earlier parameters besides."""
+    levels: list[dict[str, Poly]] = [{} for _ in order]
+
+    def put(p: Poly) -> None:
+        if p.is_zero() or ring.is_constant(p):
+            return
+        for f, _ in ring.irreducible_factors(p):
+            if never_zero(f, positive):
+                continue
+            used = set(ring.params_in(f))
+            top = max(i for i, k in enumerate(order) if k in used)
+            levels[top][ring.key(f)] = f
+
+    for p in polys:
+        put(p)
+    for i in range(len(order) - 1, 0, -1):
+        name = ring.PARAM_NAMES[order[i]]
+        slot = ring.param_slot(order[i])
+        here = list(levels[i].values())
+        for p in here:
+            put(ring.coefficients(p, slot)[-1])
+            if p.degrees()[slot] > 1:
+                put(p.discriminant(name))
+            if order[i] in positive:
+                put(ring.coefficients(p, slot)[0])
+        for p, q in combinations(here, 2):
+            put(p.resultant(q, name))
+    return [list(level.values()) for level in levels]
+
+
+def _lift(
+    levels: list[list[Poly]], order: list[int], positive: frozenset[int], i: int, sample: Sample
+) -> Iterator[Sample]:
+    if i == len(order):
+        yield dict(sample)
+        return
+    k = order[i]
+    slot = ring.param_slot(k)
+    polys = [ring.univariate(ring.substitute(p, sample), slot) for p in levels[i]]
+    for value in gaps([p for p in polys if p.degree() > 0], k in positive):
+        sample[k] = value
+        yield from _lift(levels, order, positive, i + 1, sample)
+    sample.pop(k, None)
+
+
+def gaps(polys: list[object], positive: bool) -> list[Rational]:
+    """Rational points, one in every open interval cut out by the real roots of integer
+    polynomials (of the positive half-line, if so asked)."""
+    from flint import fmpz_poly
+
+    whole = fmpz_poly([1])
+    for p in polys:
+        g = whole.gcd(p)
+        whole = whole * (p // g if g.degree() > 0 else p)
+    if positive and whole[0] == 0:
+        shift = next(i for i in range(whole.degree() + 1) if whole[i] != 0)
+        whole = whole.right_shift(shift)
+    prec = START_PREC
+    whole = _squarefree(whole)
+    while True:
+        roots = isolate(whole, prec) if whole.degree() > 0 else []
+        if positive:
+            if any(r.contains(0) for r in roots):
+                prec *= 2
+                continue
+            roots = [r for r in roots if r > 0]
+        if all(a < b for a, b in zip(roots, roots[1:], strict=False)):
+            break
+        prec *= 2
+    ends = [(_rational(r.lower()), _rational(r.upper())) for r in roots]
+    low: Rational | None = fmpq(0) if positive else None
+    out = []
+    for a, b in ends:
+        out.append(simplest_between(low, a))
+        low = b
+    out.append(simplest_between(low, None))
+    return out
+
+
+def _squarefree(p: object) -> object:
+    from flint import fmpz_poly
+
+    assert isinstance(p, fmpz_poly)
+    if p.degree() < 2:
+        return p
+    g = p.gcd(p.derivative())
+    return p // g if g.degree() > 0 else p
+
+
+def _rational(x: object) -> Rational:
+    """A ball's end as an exact rational."""
+    from flint import arb
+
+    assert isinstance(x, arb)
+    man, exp = x.mid().man_exp()
+    return fmpq(int(man)) * fmpq(2) ** int(exp) if exp >= 0 else fmpq(int(man), 2 ** -int(exp))

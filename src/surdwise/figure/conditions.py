@@ -1,0 +1,238 @@
+"""Relations and conditions in words: what must vanish, and what sign must be what.
+
+`equations` serves hypotheses (each element must vanish) and `truth` serves conditions and
+theses at one real figure, through a `Judge` that proves signs.  Exact.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from itertools import combinations
+from typing import Any
+
+from ..field.tower import Element
+from ..sheet.tree import And, Comparison, Condition, Not, Or, Pt, Relation
+from .plane import Straight, Vec, cross, dot, orientation, square
+from .quantities import difference
+from .reader import Reader
+
+
+class Judge(Reader):
+    """A reader that can tell the sign of an element at its figure."""
+
+    def sign(self, e: Element) -> int:
+        """Proved sign of e: -1, 0 or 1."""
+        raise NotImplementedError
+
+    def weak_sign(self, e: Element) -> int:
+        """The same, for a comparison that admits equality."""
+        raise NotImplementedError
+
+    def zero(self, e: Element) -> bool:
+        """Whether e vanishes on the whole cell of the figure."""
+        raise NotImplementedError
+
+
+# ---------------------------------------------------------------- what must vanish
+
+
+def _collinear(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
+    vs = [r.at(p) for p in pts]
+    if len(vs) == 3:
+        return [orientation(*vs)]
+    return [orientation(a, b, c) for a, b, c in combinations(vs, 3)]
+
+
+def _concyclic(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
+    out = []
+    for d in pts[3:]:
+        k = r.circumcentre(pts[0], pts[1], pts[2])
+        out.append(square(r.at(d) - k) - square(r.at(pts[0]) - k))
+    return out
+
+
+def _parallel(r: Reader, a: Any, b: Any) -> list[Element]:
+    return [cross(r.line(a).direction, r.line(b).direction)]
+
+
+def _perpendicular(r: Reader, a: Any, b: Any) -> list[Element]:
+    return [dot(r.line(a).direction, r.line(b).direction)]
+
+
+EQUATIONS: dict[str, Callable[..., list[Element]]] = {
+    "collinear": _collinear,
+    "concyclic": _concyclic,
+    "parallel_lines": _parallel,
+    "perpendicular_lines": _perpendicular,
+    "on_line": lambda r, p, line: _incident(r, r.at(p), r.line(line)),
+    "on_circle": lambda r, p, k: _on_circle(r, r.at(p), r.circle(k)),
+}
+
+
+def _incident(r: Reader, p: Vec, line: Straight) -> list[Element]:
+    return [cross(line.direction, p - line.point)]
+
+
+def _on_circle(r: Reader, p: Vec, k: Any) -> list[Element]:
+    return [square(p - k.centre) - k.radius2]
+
+
+def equations(rel: Relation, r: Reader) -> list[Element] | None:
+    """Elements that vanish exactly when the relation holds; None if it is not of this kind."""
+    fn = EQUATIONS.get(rel.form)
+    return None if fn is None else fn(r, *rel.args)
+
+
+# ---------------------------------------------------------------- truth at a figure
+
+
+def truth(c: Condition, j: Judge) -> bool:
+    """Whether the condition holds on the judge's figure."""
+    if isinstance(c, Not):
+        return not truth(c.arg, j)
+    if isinstance(c, And):
+        return all(truth(x, j) for x in c.args)
+    if isinstance(c, Or):
+        return any(truth(x, j) for x in c.args)
+    if isinstance(c, Comparison):
+        return all(compare(c.items[i], op, c.items[i + 1], j) for i, op in enumerate(c.ops))
+    eqs = equations(c, j)
+    if eqs is not None:
+        return all(j.zero(e) for e in eqs)
+    return CONDITIONS[c.form](j, *c.args)
+
+
+def compare(left: Any, op: str, right: Any, j: Judge) -> bool:
+    """One link of a comparison."""
+    e = difference(left, right, j)
+    if op == "=":
+        return j.zero(e)
+    if op in ("<", ">"):
+        return j.sign(e) == (1 if op == ">" else -1)
+    return j.weak_sign(e) != (-1 if op == ">=" else 1)
+
+
+_OPEN = {
+    "between",
+    "inside",
+    "outside",
+    "same_side",
+    "opposite_sides",
+    "convex",
+    "distinct",
+}
+_CLOSED = {*EQUATIONS, "on_segment", "on_ray", "is_equilateral", "is_isosceles"}
+
+
+def is_open(c: Condition) -> bool:
+    """Whether small movements of a figure keep the condition true (within the equations that
+    hold identically)."""
+    if isinstance(c, Not):
+        return is_closed(c.arg)
+    if isinstance(c, (And, Or)):
+        return all(is_open(x) for x in c.args)
+    if isinstance(c, Comparison):
+        return all(op in ("<", ">") for op in c.ops)
+    return c.form in _OPEN or c.args[-1] in ("acute", "obtuse")
+
+
+def is_closed(c: Condition) -> bool:
+    """Whether the condition passes to limits of figures on which everything in it is defined."""
+    if isinstance(c, Not):
+        return is_open(c.arg) and not (isinstance(c.arg, Relation) and c.arg.form == "between")
+    if isinstance(c, (And, Or)):
+        return all(is_closed(x) for x in c.args)
+    if isinstance(c, Comparison):
+        return all(op in ("=", "<=", ">=") for op in c.ops)
+    return c.form in _CLOSED
+
+
+def _between(j: Judge, c: Pt, a: Pt, b: Pt) -> bool:
+    p, q, m = j.at(a), j.at(b), j.at(c)
+    return j.zero(orientation(p, q, m)) and j.sign(dot(p - m, q - m)) < 0
+
+
+def _orients(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> tuple[int, list[int]]:
+    a, b, c = (j.at(x) for x in tri)
+    v = j.at(p)
+    whole = j.sign(orientation(a, b, c))
+    return whole, [j.sign(orientation(x, y, v)) * whole for x, y in ((a, b), (b, c), (c, a))]
+
+
+def _inside(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> bool:
+    whole, signs = _orients(j, p, tri)
+    return whole != 0 and all(s > 0 for s in signs)
+
+
+def _outside(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> bool:
+    whole, signs = _orients(j, p, tri)
+    return whole != 0 and any(s < 0 for s in signs)
+
+
+def _side_product(j: Judge, p: Pt, q: Pt, line: Any) -> int:
+    s = j.line(line)
+    a = j.sign(cross(s.direction, j.at(p) - s.point))
+    return a and a * j.sign(cross(s.direction, j.at(q) - s.point))
+
+
+def _angle(j: Judge, b: Pt, a: Pt, c: Pt) -> str:
+    u, v = j.at(b) - j.at(a), j.at(c) - j.at(a)
+    j.differ(j.at(a), j.at(b), f"{a} = {b}")
+    j.differ(j.at(a), j.at(c), f"{a} = {c}")
+    return {1: "acute", 0: "right", -1: "obtuse"}[j.sign(dot(u, v))]
+
+
+def _triangle_size(j: Judge, tri: tuple[Pt, ...], size: str) -> bool:
+    a, b, c = tri
+    corners = ((c, a, b), (a, b, c), (b, c, a))
+    if size == "acute":
+        return all(_angle(j, *x) == "acute" for x in corners)
+    return any(_angle(j, *x) == size for x in corners)
+
+
+def _convex(j: Judge, quad: tuple[Pt, ...]) -> bool:
+    vs = [j.at(p) for p in quad]
+    n = len(vs)
+    signs = {j.sign(orientation(vs[i], vs[(i + 1) % n], vs[(i + 2) % n])) for i in range(n)}
+    return len(signs) == 1 and 0 not in signs
+
+
+def _distinct(j: Judge, pts: tuple[Pt, ...]) -> bool:
+    return not any(j.zero(square(j.at(a) - j.at(b))) for a, b in combinations(pts, 2))
+
+
+def _on_segment(j: Judge, p: Pt, pair: tuple[Pt, ...]) -> bool:
+    a, b, v = j.at(pair[0]), j.at(pair[1]), j.at(p)
+    return j.zero(orientation(a, b, v)) and j.weak_sign(dot(a - v, b - v)) <= 0
+
+
+def _on_ray(j: Judge, p: Pt, pair: tuple[Pt, ...]) -> bool:
+    a, b, v = j.at(pair[0]), j.at(pair[1]), j.at(p)
+    return j.zero(orientation(a, b, v)) and j.weak_sign(dot(v - a, b - a)) >= 0
+
+
+def _is_equilateral(j: Judge, tri: tuple[Pt, ...]) -> bool:
+    a, b, c = (j.at(x) for x in tri)
+    return j.zero(square(a - b) - square(b - c)) and j.zero(square(b - c) - square(c - a))
+
+
+def _is_isosceles(j: Judge, tri: tuple[Pt, ...], apex: Pt) -> bool:
+    b, c = (j.at(x) for x in tri if x.name != apex.name)
+    return j.zero(square(j.at(apex) - b) - square(j.at(apex) - c))
+
+
+CONDITIONS: dict[str, Callable[..., bool]] = {
+    "between": _between,
+    "inside": _inside,
+    "outside": _outside,
+    "same_side": lambda j, p, q, line: _side_product(j, p, q, line) > 0,
+    "opposite_sides": lambda j, p, q, line: _side_product(j, p, q, line) < 0,
+    "angle_size": lambda j, tri, size: _angle(j, *tri) == size,
+    "triangle_size": _triangle_size,
+    "convex": _convex,
+    "distinct": _distinct,
+    "on_segment": _on_segment,
+    "on_ray": _on_ray,
+    "is_equilateral": _is_equilateral,
+    "is_isosceles": _is_isosceles,
+}

@@ -1,0 +1,145 @@
+"""A sheet's figure as a program: its `given` lines, run over any stratum of parameters.
+
+`run` takes equations between the parameters (and missed chart positions) and returns every
+component of the figure there, with the borders at which the figure's own algebra changes
+(denominators, discriminants, leading coefficients) and the strata where a hypothesis that
+fails in general can still be met.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass, field
+
+from ..field import cells, ring, roots
+from ..field.ring import Poly
+from ..field.tower import Element
+from ..sheet.tree import Comparison, Fact, Line, Relation, Sheet
+from .base import Base, plug, solve
+from .component import Builder, Component, Frame, Require, outcomes
+from .conditions import equations
+from .quantities import difference
+from .scale import keeps_scale
+from .vocabulary import CONSTRUCTIONS
+
+
+@dataclass
+class Run:
+    """What one run of the program found."""
+
+    components: list[Component] = field(default_factory=list)
+    borders: list[dict[str, Poly]] = field(default_factory=list)
+    strata: dict[str, Poly] = field(default_factory=dict)
+    charts: set[int] = field(default_factory=set)
+    dead: list[tuple[int, str]] = field(default_factory=list)
+
+
+@dataclass
+class Program:
+    """The given lines of a sheet and the frame they are placed in."""
+
+    lines: tuple[Line, ...]
+    frame: Frame
+
+    def run(
+        self,
+        eqs: Sequence[Poly] = (),
+        missed: frozenset[int] = frozenset(),
+        excluded: Sequence[Poly] = (),
+        tick: Callable[[], None] = lambda: None,
+    ) -> Run:
+        """All components over the stratum where `eqs` vanish and `excluded` do not."""
+        out = Run()
+        for base in solve(eqs):
+            tick()
+            comp = self._ground(base, excluded)
+            if comp is None:
+                continue
+            lead_borders: dict[str, Poly] = {}
+            for e in base.leads:
+                lead_borders.update(roots.norm_factors(e))
+            alive = [comp]
+            for step, line in enumerate(self.lines):
+                tick()
+                nxt: list[Component] = []
+                for c in alive:
+                    for b, why in outcomes(c, self.frame, step, missed, _action(line)):
+                        out.strata.update(b.strata)
+                        if b.has_chart:
+                            out.charts.add(step)
+                        if why is None:
+                            nxt.append(b.comp)
+                        else:
+                            out.dead.append((step, why))
+                            out.strata.update({ring.key(ring.param(k)): ring.param(k) for k in b.comp.folded})
+                alive = nxt
+            for c in alive:
+                out.components.append(c)
+                out.borders.append({**lead_borders, **figure_borders(c)})
+        return out
+
+    def _ground(self, base: Base, excluded: Sequence[Poly]) -> Component | None:
+        requires = []
+        for g in excluded:
+            e = plug(g, base)
+            if e.is_zero():
+                return None
+            if not e.is_rational():
+                requires.append(Require(e, "!=", ""))
+        return Component(base.tower, base.values, (), requires=tuple(requires))
+
+
+def program(sheet: Sheet) -> Program:
+    """The program of a sheet."""
+    return Program(sheet.given, Frame(keeps_scale(sheet)))
+
+
+def _action(line: Line) -> Callable[[Builder], None]:
+    body = line.body
+    if isinstance(body, Fact):
+        fn = CONSTRUCTIONS[body.form]
+        return lambda b: fn(b, *body.args)
+    if isinstance(body, Relation):
+        rel = body
+        return lambda b: _relate(b, rel, line.text)
+    assert isinstance(body, Comparison)
+    left, right = body.items
+    return lambda b: b.vanish(difference(left, right, b), f"{line.text} cannot hold")
+
+
+def _relate(b: Builder, rel: Relation, text: str) -> None:
+    eqs = equations(rel, b)
+    assert eqs is not None, rel.form
+    for e in eqs:
+        b.vanish(e, f"{text} cannot hold")
+
+
+def figure_borders(c: Component) -> dict[str, Poly]:
+    """Irreducible polynomials whose zeros are the only places where the figure's algebra can
+    change: denominators, guards, discriminants of two-valued steps, folded parameters."""
+    out: dict[str, Poly] = {}
+
+    def add(e: Element) -> None:
+        for name, p in roots.norm_factors(Element(c.tower, e.num, e.den)).items():
+            if not cells.never_zero(p, c.positive - c.folded):
+                out[name] = p
+
+    for k in c.folded:
+        p = ring.param(k)
+        out[ring.key(p)] = p
+    for g in c.guards:
+        add(g.element)
+    for v in c.points.values():
+        for e in (v.x, v.y):
+            out.update(roots.denominator_factors(e))
+    for step in c.tower.gens:
+        if step.choice != "positive" and step.radicand is not None:
+            add(Element(c.tower, step.radicand, ring.ONE))
+        elif step.radicand is None:
+            d = c.tower.reduce(step.modulus.discriminant(ring.GEN_NAMES[step.index]))
+            add(Element(c.tower, d, ring.ONE))
+        if not ring.is_constant(step.orient):
+            add(Element(c.tower, step.orient, ring.ONE))
+    return {n: p for n, p in out.items() if not cells.never_zero(p, c.positive - c.folded)}
+
+

@@ -1,0 +1,186 @@
+"""One real figure of a component: literal signs, and a register of what they depend on.
+
+A spot reads quantities with every length non-negative.  Each sign it settles is entered, by
+the irreducible factors of the norm of the element, in the component's register: inside a cell
+that avoids them all, every spot of the same branch settles every sign alike.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass, field
+
+from ..field import cells, ring, roots
+from ..field.real import Branch, Unsettled
+from ..field.ring import Poly
+from ..field.tower import Element
+from ..figure.component import Component
+from ..figure.conditions import Judge
+from ..figure.plane import Vec, square
+
+CELL = frozenset({"figure", "fold", "open", "closed"})
+
+
+class Undefined(Exception):
+    """A quantity of the statement has no value on this figure; the words say why."""
+
+
+@dataclass
+class Register:
+    """Border polynomials of a component by key, each with the kinds of its origins.
+
+    `figure`: the construction changes; `fold`: the inside of an absolute value changes sign;
+    `open`, `closed`: a strict or weak comparison does; `thin`: an equation holds there only.
+    All but `thin` bound cells.
+    """
+
+    polys: dict[str, Poly] = field(default_factory=dict)
+    kinds: dict[str, set[str]] = field(default_factory=dict)
+    done: set[str] = field(default_factory=set)
+
+    def enter(self, kind: str, factors: dict[str, Poly]) -> None:
+        """Add polynomials under a kind."""
+        for name, p in factors.items():
+            self.polys[name] = p
+            self.kinds.setdefault(name, set()).add(kind)
+
+    def borders(self) -> list[Poly]:
+        """What cells must avoid."""
+        return [p for n, p in self.polys.items() if self.kinds[n] & CELL]
+
+    def count(self) -> int:
+        """How many bounding polynomials are known."""
+        return sum(1 for n in self.polys if self.kinds[n] & CELL)
+
+    def of(self, kinds: Sequence[str]) -> dict[str, Poly]:
+        """Polynomials with one of the kinds."""
+        return {n: p for n, p in self.polys.items() if self.kinds[n] & set(kinds)}
+
+
+class Spot(Judge):
+    """A real figure: one branch of one component over one sample."""
+
+    def __init__(self, comp: Component, branch: Branch, register: Register) -> None:
+        self.comp = comp
+        self.branch = branch
+        self.register = register
+        self.origin = "thesis"
+        self._roots: dict[str, Element] = {}
+
+    # ------------------------------------------------------------------ signs
+
+    def _enter(self, kind: str, e: Element) -> None:
+        name = f"{kind}:{self.origin}:{e.key()}"
+        if name in self.register.done:
+            return
+        self.register.done.add(name)
+        whole = Element(self.comp.tower, e.num, e.den)
+        found = {**roots.norm_factors(whole), **roots.denominator_factors(whole)}
+        found = {n: p for n, p in found.items() if not cells.never_zero(p, self.comp.positive)}
+        self.register.enter(kind, found)
+        self.register.enter(f"{self.origin}:{kind}", found)
+
+    def _sign(self, e: Element, kind: str) -> int:
+        if e.is_zero():
+            return 0
+        if e.is_rational():
+            return 1 if e.as_rational() > 0 else -1
+        self._enter(kind, e)
+        return self.branch.sign(Element(self.comp.tower, e.num, e.den))
+
+    def sign(self, e: Element) -> int:
+        """Sign on the whole cell."""
+        return self._sign(e, "open")
+
+    def weak_sign(self, e: Element) -> int:
+        """Sign on the whole cell, for a comparison that admits equality."""
+        return self._sign(e, "closed")
+
+    def zero(self, e: Element) -> bool:
+        """Whether e vanishes identically on the component (elsewhere only on a thin set)."""
+        if e.is_zero():
+            return True
+        if not e.is_rational():
+            self._enter("thin", e)
+        return False
+
+    # ------------------------------------------------------------------ reading
+
+    def absolute(self, e: Element) -> Element:
+        """|e| by the sign of e at the spot."""
+        if e.is_zero():
+            return e
+        return e * self._sign(e, "fold")
+
+    def root(self, q: Element) -> Element:
+        """Literal square root; Undefined where q is negative."""
+        if q.is_zero():
+            return q
+        name = q.key()
+        if name not in self._roots:
+            self._roots[name] = self._root(q)
+        return self._roots[name]
+
+    def _root(self, q: Element) -> Element:
+        r = roots.sqrt(q, self.comp.tower)
+        if r is not None:
+            return self.absolute(r)
+        if cells.known_sign(q.num, self.comp.positive) * cells.known_sign(q.den, self.comp.positive) <= 0:
+            s = self._sign(q, "fold")
+            if s < 0:
+                raise Undefined("a square root of a negative quantity")
+        self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", "length")
+        return r
+
+    def divide(self, a: Element, b: Element, words: str) -> Element:
+        """a/b; Undefined where b vanishes identically."""
+        if b.is_zero():
+            raise Undefined(words)
+        if not b.is_rational():
+            self._enter("thin", b)
+            self.register.enter("divisor", roots.norm_factors(Element(self.comp.tower, b.num, b.den)))
+        return a / b
+
+    def differ(self, a: Vec, b: Vec, words: str) -> None:
+        """Undefined where two points coincide."""
+        d = square(a - b)
+        if d.is_zero():
+            raise Undefined(words)
+
+    def admitted(self, conditions: Sequence[Callable[[Judge], bool]]) -> bool:
+        """Whether the component's requirements and the sheet's conditions hold here."""
+        self.origin = "admission"
+        try:
+            for r in self.comp.requires:
+                e = r.element
+                if r.op == "!=":
+                    if e.is_zero():
+                        return False
+                    continue
+                s = self._sign(e, "open" if r.op == ">" else "closed")
+                if s < 0 or (s == 0 and r.op == ">"):
+                    return False
+            return all(c(self) for c in conditions)
+        finally:
+            self.origin = "thesis"
+
+
+class Hint(Spot):
+    """A spot that guesses: signs by one ball, nothing entered.  For proposals that are proved
+    afterwards, never for a verdict."""
+
+    def __init__(self, comp: Component, branch: Branch) -> None:
+        super().__init__(comp, branch, Register())
+
+    def _enter(self, kind: str, e: Element) -> None:
+        return
+
+    def _sign(self, e: Element, kind: str) -> int:
+        if e.is_zero():
+            return 0
+        s = self.branch.hint(Element(self.comp.tower, e.num, e.den))
+        if s is None:
+            raise Unsettled("too near zero to guess")
+        return s
+
+

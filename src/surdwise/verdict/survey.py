@@ -1,0 +1,180 @@
+"""The survey: every admitted figure, stratum by stratum, with the truth of given statements.
+
+Over each component, parameter space is cut into open cells by the register's borders; over one
+sample in each cell every real branch is judged, literally.  What a judgement depends on enters
+the register and the cutting is repeated until nothing new turns up.  Then every border that
+matters becomes one more equation on the same figure: the same engine runs one dimension less.
+"""
+
+from __future__ import annotations
+
+import time
+from collections.abc import Callable, Iterator, Sequence
+from dataclasses import dataclass, field
+
+from ..field import cells, ring
+from ..field.real import Branch, Unsettled, branches
+from ..field.ring import Poly
+from ..figure.component import Component
+from ..figure.conditions import Judge
+from ..figure.program import Program, Run
+from .spot import Register, Spot, Undefined
+
+Statement = Callable[[Judge], bool]
+
+
+class OutOfTime(Exception):
+    """The time limit was reached."""
+
+
+@dataclass(frozen=True)
+class Place:
+    """One real figure standing for its whole cell: `dimension` free parameters, the truth of
+    every statement there (None: undefined)."""
+
+    dimension: int
+    comp: Component
+    branch: Branch
+    truths: tuple[bool | None, ...]
+    depth: int
+
+
+@dataclass
+class Survey:
+    """The result: all places, and what was left out."""
+
+    places: list[Place] = field(default_factory=list)
+    not_examined: list[str] = field(default_factory=list)
+    undefined: set[str] = field(default_factory=set)
+    top: Run | None = None
+    dead: list[tuple[int, str]] = field(default_factory=list)
+    strata: int = 0
+    cells: int = 0
+
+
+@dataclass
+class Surveyor:
+    """Surveys one figure for one list of statements."""
+
+    program: Program
+    conditions: Sequence[Statement]
+    statements: Sequence[Statement]
+    deadline: float
+    closed: bool = False
+    open_conditions: bool = True
+    progress: Callable[[str], None] = lambda text: None
+    result: Survey = field(default_factory=Survey)
+    seen: set[tuple[frozenset[str], frozenset[int]]] = field(default_factory=set)
+
+    def tick(self) -> None:
+        """Stop when time is out."""
+        if time.monotonic() > self.deadline:
+            raise OutOfTime
+
+    def run(self) -> Survey:
+        """Survey everything."""
+        self._stratum([], frozenset(), [], 0)
+        return self.result
+
+    # ------------------------------------------------------------------ strata
+
+    def _stratum(
+        self, eqs: list[Poly], missed: frozenset[int], excluded: list[Poly], depth: int, ceiling: int = 99
+    ) -> None:
+        name = (frozenset(ring.key(p) for p in eqs), missed)
+        if name in self.seen:
+            return
+        self.seen.add(name)
+        self.tick()
+        self.result.strata += 1
+        run = self.program.run(eqs, missed, excluded, self.tick)
+        if self.result.top is None:
+            self.result.top = run
+        if depth == 0:
+            self.result.dead += run.dead
+        todo: dict[str, tuple[Poly, int]] = {n: (p, 98) for n, p in run.strata.items()}
+        for comp, borders in zip(run.components, run.borders, strict=True):
+            if len(comp.free) > ceiling:
+                continue
+            register = Register()
+            register.enter("figure", borders)
+            before = len(self.result.places)
+            self._component(comp, register, depth)
+            found = self.result.places[before:]
+            for n, p in self._matters(register, found).items():
+                old = todo.get(n)
+                todo[n] = (p, max(len(comp.free) - 1, old[1] if old else 0))
+        done = list(excluded)
+        for _, (p, top) in sorted(todo.items(), key=lambda item: (len(item[1][0]), item[0])):
+            self.progress(f"{self.result.strata} strata, {self.result.cells} cells")
+            self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling))
+            done.append(p)
+        for step in sorted(run.charts - missed):
+            if not missed or step > max(missed):
+                self._stratum(list(eqs), missed | {step}, list(excluded), depth, ceiling)
+
+    def _matters(self, register: Register, found: list[Place]) -> dict[str, Poly]:
+        """Borders whose strata must be looked at.
+
+        Lemma: let the thesis be closed (=, <=, >=) and true on every admitted open cell.  An
+        admitted figure where the construction is regular is a limit of figures of its open
+        cell, admitted too unless a weak or equational condition of admission is what vanishes;
+        lengths are continuous, so the thesis holds in the limit.  Only figure borders and those
+        conditions remain.  (Not so where the construction degenerates: x^2 = -u^2 has its only
+        real figure at u = 0, a limit of none.)
+        """
+        if self.closed and all(all(p.truths) for p in found):
+            kinds = ["figure", "admission:closed", "admission:thin"]
+            return register.of(kinds if self.open_conditions else [*kinds, "admission:open"])
+        return register.of(["figure", "open", "closed", "thin"])
+
+    # ------------------------------------------------------------------ one component
+
+    def _component(self, comp: Component, register: Register, depth: int) -> None:
+        order = self._order(comp, register)
+        tower = comp.tower
+        while True:
+            count = register.count()
+            places: list[Place] = []
+            loose = 0
+            for sample in cells.open_cells(register.borders(), order, comp.positive):
+                self.tick()
+                self.result.cells += 1
+                try:
+                    for branch in branches(tower, sample):
+                        place = self._judge(comp, branch, register, depth)
+                        if place is not None:
+                            places.append(place)
+                except Unsettled:
+                    loose += 1
+            if register.count() == count:
+                if loose:
+                    raise Unsettled("a sample lies on a special place that no border explains")
+                self.result.places += places
+                return
+            order = self._order(comp, register)
+
+    def _judge(self, comp: Component, branch: Branch, register: Register, depth: int) -> Place | None:
+        spot = Spot(comp, branch, register)
+        try:
+            if not spot.admitted(self.conditions):
+                return None
+            truths = tuple(s(spot) for s in self.statements)
+        except Undefined as e:
+            self.result.undefined.add(str(e))
+            return None
+        return Place(len(comp.free), comp, branch, truths, depth)
+
+    def _order(self, comp: Component, register: Register) -> list[int]:
+        """Parameters in the order of lifting: those of low degree in the borders last."""
+
+        def weight(k: int) -> tuple[int, int]:
+            slot = ring.param_slot(k)
+            return sum(max(p.degrees()[slot], 0) for p in register.borders()), -k
+
+        return sorted(comp.free, key=weight, reverse=True)
+
+
+def admitted(places: Sequence[Place], dimension: int) -> Iterator[Place]:
+    """Places of one dimension."""
+    return (p for p in places if p.dimension == dimension)
