@@ -206,7 +206,7 @@ def _real_roots(g: Gen, b: Branch, below: list[arb], prec: int) -> list[arb]:
         return isolate(_integer_poly(rats), prec)
     balls = [arb(ring.value_of(c)) if ring.is_constant(c) else _evaluate(c, below) for c in cs]
     try:
-        found = acb_poly(balls).roots()
+        found = acb_poly(balls).roots(tol=arb(2) ** -(prec // 2))
     except ValueError as e:
         raise Unsettled(str(e)) from e
     real: list[arb] = []

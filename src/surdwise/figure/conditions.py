@@ -12,6 +12,7 @@ from typing import Any
 
 from ..field.tower import Element
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Pt, Relation
+from .base import Base, plug
 from .plane import Straight, Vec, cross, dot, orientation, square
 from .quantities import difference
 from .reader import Reader
@@ -221,7 +222,16 @@ def _is_isosceles(j: Judge, tri: tuple[Pt, ...], apex: Pt) -> bool:
     return j.zero(square(j.at(apex) - b) - square(j.at(apex) - c))
 
 
+def _frame_sign(j: Judge, p: Any, op: str) -> bool:
+    """A comparison of a polynomial in the frame's parameters with zero."""
+    e = plug(p, Base(j.comp.tower, j.comp.values))
+    if op == "=":
+        return j.zero(e)
+    return j.sign(e) == (1 if op == ">" else -1)
+
+
 CONDITIONS: dict[str, Callable[..., bool]] = {
+    "frame_sign": _frame_sign,
     "between": _between,
     "inside": _inside,
     "outside": _outside,

@@ -58,6 +58,8 @@ def build_data(grammar: str) -> dict[str, Any]:
                 actions[spelled.get(symbol, symbol)] = number
             else:
                 gotos[symbol] = number
+        if state in raw["end_states"].values():
+            actions[END] = numbers[state]  # nothing is left to read: the statement is whole
         rows.append([actions, gotos])
     return {
         "fingerprint": fingerprint(grammar),

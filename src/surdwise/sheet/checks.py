@@ -77,9 +77,9 @@ def _check_form(part: Fact | Relation) -> None:
             if point in triangle:
                 message = f"expected a point other than the corners of {names(triangle)}, got {point.name}"
                 raise Problem(point.span, message)
-        case (("meet" | "meet_other"), (_, first, second, *_)):
-            if first == second and isinstance(second, Through):
-                raise Problem(second.span, f"expected two different curves, got {names(second.points)} twice")
+        case (("meet" | "meet_other"), (_, Through() as one, Through() as other, *_)):
+            if set(one.points) == set(other.points):
+                raise Problem(other.span, f"expected two different curves, got {names(other.points)} twice")
         case ("circle_centre_radius", (_, _, Number() as radius)):
             if radius.value <= 0:
                 raise Problem(radius.span, f"expected a positive radius, got {radius.value}")
@@ -111,9 +111,8 @@ def _check_run(points: Sequence[Pt]) -> None:
 def _check_list(form: str, points: Sequence[Pt]) -> None:
     fewest = FEWEST.get(form, 1)
     if len(points) < fewest:
-        raise Problem(
-            extent(points), f"expected at least {_COUNTS[fewest]} points that are {form}, got {len(points)}"
-        )
+        count = _COUNTS.get(len(points), "one")
+        raise Problem(extent(points), f"expected at least {_COUNTS[fewest]} points that are {form}, got {count}")
     _check_run(points)
 
 

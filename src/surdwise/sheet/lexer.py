@@ -24,7 +24,7 @@ _TOKEN = re.compile(
     rf"(?P<run>(?:[A-Z](?:[0-9]+|[{PRIMES}]+)?)+)"
     r"|(?P<word>nine-point\b|perp\.|[a-z][a-z0-9_]*)"
     r"|(?P<number>[0-9]+(?:\.[0-9]+)?)"
-    r"|(?P<wrong>==|!=|<>|=<|=>|\*\*|&&|\|\|)"
+    r"|(?P<wrong>==|!=|<>|=<|=>|\*\*|&&)"
     r"|(?P<compare><=|>=|[<>≤≥⩽⩾])"
     r"|(?P<sign>[=+\-*/^|(),−·×⋅∣])"
 )
@@ -118,16 +118,17 @@ class Lexer:
         match = _REST_OF_NAME.match(self._source, at, self._stop)
         end = max(end + 1, match.end() if match else end)
         text = self._source[at:end]
-        message, hint = "", ""
-        if any(c.islower() for c in text):
+        if not text.isascii() and text.strip(PRIMES).isalpha():
+            hint = ""  # explain.py names the letter
+        elif text[1:].islower():
+            hint = f"words are written in lower case: {text.lower()}"
+        elif any(c.islower() for c in text):
             hint = "words are lower case, points are capitals, with a space between them"
-            if text[1:].islower():
-                hint = f"words are written in lower case: {text.lower()}"
         elif any(c in PRIMES for c in text):
             hint = "a point is a capital with digits (B2) or primes (B''), not both"
         else:
             hint = "a point is a capital letter, with digits (B2) or primes (B') if need be"
-        return Token(BAD, text, at + 1, end + 1, (message, hint))
+        return Token(BAD, text, at + 1, end + 1, ("", hint))
 
     def _bad_word(self, at: int, end: int) -> Token:
         match = _REST_OF_NAME.match(self._source, at, self._stop)

@@ -87,17 +87,32 @@ def _too_deep(span: Span) -> Problem:
 
 def acceptable(table: Table, states: tuple[int, ...]) -> frozenset[str]:
     """The terminals that can really come next, the table's states being `states`."""
-    return frozenset(kind for kind in table.actions[states[-1]] if _accepts(table, states, kind))
+    return frozenset(kind for kind in table.actions[states[-1]] if after(table, states, kind))
 
 
-def _accepts(table: Table, states: tuple[int, ...], kind: str) -> bool:
+def after(table: Table, states: tuple[int, ...], kind: str) -> tuple[int, ...]:
+    """The states after one more terminal, or () if it cannot come next."""
     stack = list(states)
     while True:
         action = table.actions[stack[-1]].get(kind)
         if action is None:
-            return False
+            return ()
         if action >= 0:
-            return True
-        rule = table.rules[-1 - action]
-        del stack[-len(rule.kept) :]
-        stack.append(table.gotos[stack[-1]][rule.origin])
+            return (*stack, action)
+        _reduce(table, stack, action)
+
+
+def resting(table: Table, states: tuple[int, ...]) -> tuple[int, ...]:
+    """The states after all reductions that do not depend on what comes next."""
+    stack = list(states)
+    while True:
+        actions = set(table.actions[stack[-1]].values())
+        if len(actions) != 1 or min(actions) >= 0:
+            return tuple(stack)
+        _reduce(table, stack, actions.pop())
+
+
+def _reduce(table: Table, stack: list[int], action: int) -> None:
+    rule = table.rules[-1 - action]
+    del stack[-len(rule.kept) :]
+    stack.append(table.gotos[stack[-1]][rule.origin])

@@ -130,6 +130,9 @@ class Spot(Judge):
             if s < 0:
                 raise Undefined("a square root of a negative quantity")
         self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", "length")
+        orient = self.comp.tower.gens[-1].orient
+        if not ring.is_constant(orient):
+            self._enter("fold", self.comp.tower.element(orient))
         return r
 
     def divide(self, a: Element, b: Element, words: str) -> Element:

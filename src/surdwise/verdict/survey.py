@@ -48,6 +48,7 @@ class Survey:
     undefined: set[str] = field(default_factory=set)
     top: Run | None = None
     dead: list[tuple[int, str]] = field(default_factory=list)
+    borders: dict[str, Poly] = field(default_factory=dict)
     strata: int = 0
     cells: int = 0
 
@@ -101,6 +102,8 @@ class Surveyor:
             before = len(self.result.places)
             self._component(comp, register, depth)
             found = self.result.places[before:]
+            if depth == 0 and found:
+                self.result.borders.update(register.polys)
             for n, p in self._matters(register, found).items():
                 old = todo.get(n)
                 todo[n] = (p, max(len(comp.free) - 1, old[1] if old else 0))

@@ -1,0 +1,278 @@
+"""Conditions of the sheet language that could name where a statement holds.
+
+The figure's own predicates, cheapest words first.  Nothing here is proved: a proposal made of
+these is decided afterwards like any other statement.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+from fractions import Fraction
+from itertools import combinations, permutations
+
+from ..field.tower import Element
+from ..figure.component import Component
+from ..figure.plane import orientation
+from ..sheet.tree import (
+    And,
+    Binary,
+    Comparison,
+    Condition,
+    Fact,
+    Measure,
+    Not,
+    Number,
+    Or,
+    Pt,
+    Quantity,
+    Relation,
+    Sheet,
+    Through,
+    Unary,
+)
+
+MAX_POINTS = 9
+
+
+@dataclass(frozen=True)
+class Candidate:
+    """A condition with its cost in words."""
+
+    condition: Condition
+    cost: float
+
+
+def length(a: Pt, b: Pt) -> Measure:
+    """|ab|."""
+    return Measure("length", (a, b))
+
+
+def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> Iterator[Candidate]:
+    """Candidate conditions on the figure's points."""
+    names = sorted({n for c in comps for n in c.points}, key=lambda n: (n not in _mentioned(sheet), n))
+    pts = [Pt(n) for n in names[:MAX_POINTS]]
+    straight = {
+        tri for tri in combinations([p.name for p in pts], 3) if all(_collinear(c, tri) for c in comps)
+    }
+    shapes = _triangles(sheet)
+    used = _lengths(claim)
+    yield from _coincidences(pts)
+    yield from _betweens(pts, straight)
+    yield from _sides(pts, straight, _lines(sheet))
+    yield from _angles(pts, straight, shapes)
+    yield from _insides(pts, straight, shapes)
+    yield from _lengths_compared(pts, used, shapes, _constants(sheet))
+    yield from _convexes(sheet, pts)
+
+
+def _collinear(c: Component, tri: Sequence[str]) -> bool:
+    if any(n not in c.points for n in tri):
+        return False
+    e: Element = orientation(*(c.points[n] for n in tri))
+    return e.is_zero()
+
+
+def _coincidences(pts: list[Pt]) -> Iterator[Candidate]:
+    for a, b in combinations(pts, 2):
+        yield Candidate(Relation("distinct", ((a, b),)), 1.2)
+
+
+def _betweens(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candidate]:
+    for tri in straight:
+        for c in tri:
+            a, b = (x for x in tri if x != c)
+            yield Candidate(Relation("between", (Pt(c), Pt(a), Pt(b))), 1.0)
+
+
+def _sides(
+    pts: list[Pt], straight: set[tuple[str, ...]], lines: set[tuple[str, ...]]
+) -> Iterator[Candidate]:
+    for a, b in combinations(pts, 2):
+        extra = 0.0 if tuple(sorted((a.name, b.name))) in lines else 0.4
+        rest = [p for p in pts if p.name not in (a.name, b.name)]
+        line = Through((a, b))
+        for p, q in combinations(rest, 2):
+            if any(tuple(sorted((a.name, b.name, x.name))) in straight for x in (p, q)):
+                continue
+            yield Candidate(Relation("same_side", (p, q, line)), 1.1 + extra)
+            yield Candidate(Relation("opposite_sides", (p, q, line)), 1.1 + extra)
+
+
+def _angles(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]) -> Iterator[Candidate]:
+    for tri in shapes:
+        for size in ("acute", "obtuse", "right"):
+            yield Candidate(Relation("triangle_size", (tri, size)), 0.9)
+    named = {frozenset(p.name for p in tri) for tri in shapes}
+    for tri in combinations(pts, 3):
+        if tuple(sorted(p.name for p in tri)) in straight:
+            continue
+        extra = 0.0 if frozenset(p.name for p in tri) in named else 0.5
+        for i in range(3):
+            a = tri[i]
+            b, c = tri[(i + 1) % 3], tri[(i + 2) % 3]
+            for size in ("acute", "right", "obtuse"):
+                yield Candidate(Relation("angle_size", ((b, a, c), size)), 1.0 + extra)
+
+
+def _insides(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]) -> Iterator[Candidate]:
+    named = {frozenset(p.name for p in tri) for tri in shapes}
+    for tri in combinations(pts, 3):
+        if tuple(sorted(p.name for p in tri)) in straight:
+            continue
+        extra = 0.0 if frozenset(p.name for p in tri) in named else 1.6
+        for p in pts:
+            if p in tri:
+                continue
+            yield Candidate(Relation("inside", (p, tri)), 0.9 + extra)
+            yield Candidate(Relation("outside", (p, tri)), 0.9 + extra)
+
+
+def _lengths_compared(
+    pts: list[Pt], used: set[tuple[str, str]], shapes: list[tuple[Pt, ...]], numbers: set[Fraction]
+) -> Iterator[Candidate]:
+    sides = {tuple(sorted((a.name, b.name))) for tri in shapes for a, b in combinations(tri, 2)}
+    pairs = list(combinations(pts, 2))
+    if len(pairs) > 15:
+        known = sides | used
+        pairs = [p for p in pairs if (p[0].name, p[1].name) in known] or pairs[:10]
+    for one, two in combinations(pairs, 2):
+        extra = sum(0.3 for p in (one, two) if (p[0].name, p[1].name) not in sides)
+        one_l, two_l = length(*one), length(*two)
+        yield Candidate(Comparison((one_l, two_l), ("=",)), 1.3 + extra)
+        yield Candidate(Comparison((one_l, two_l), ("<",)), 1.3 + extra)
+        yield Candidate(Comparison((one_l, two_l), (">",)), 1.3 + extra)
+    for k in numbers:
+        for one, two in permutations(pairs, 2):
+            if len({one[0].name, one[1].name, two[0].name, two[1].name}) == 4 and len(pairs) > 6:
+                continue
+            right = Binary("/", length(*two), Number(1 / k)) if (1 / k).denominator == 1 else Binary(
+                "*", Number(k), length(*two)
+            )
+            yield Candidate(Comparison((length(*one), right), ("=",)), 1.9)
+
+
+def _convexes(sheet: Sheet, pts: list[Pt]) -> Iterator[Candidate]:
+    quads = [f.args[0] for f in _facts(sheet) if f.form == "quadrilateral"]
+    if len(pts) == 4:
+        quads.append(tuple(pts))
+    for q in quads:
+        assert isinstance(q, tuple)
+        a, b, c, d = q
+        for order in ((a, b, c, d), (a, c, b, d), (a, b, d, c)):
+            yield Candidate(Relation("convex", (order,)), 0.9 if order == q else 1.2)
+
+
+# ---------------------------------------------------------------- what the sheet mentions
+
+
+def _facts(sheet: Sheet) -> list[Fact]:
+    return [line.body for line in sheet.given if isinstance(line.body, Fact)]
+
+
+def _mentioned(sheet: Sheet) -> set[str]:
+    """Points of the claims."""
+    out: set[str] = set()
+    for line in sheet.claims:
+        _names(line.body, out)
+    return out
+
+
+def _names(node: object, out: set[str]) -> None:
+    if isinstance(node, Pt):
+        out.add(node.name)
+    elif isinstance(node, tuple):
+        for x in node:
+            _names(x, out)
+    elif hasattr(node, "__dataclass_fields__"):
+        for f in node.__dataclass_fields__:
+            _names(getattr(node, f), out)
+
+
+def _triangles(sheet: Sheet) -> list[tuple[Pt, ...]]:
+    return [
+        f.args[0]
+        for f in _facts(sheet)
+        if f.form.endswith("triangle") and f.form != "inside_triangle" and isinstance(f.args[0], tuple)
+    ]
+
+
+def _lines(sheet: Sheet) -> set[tuple[str, ...]]:
+    """Pairs of points that the sheet joins."""
+    out: set[tuple[str, ...]] = set()
+
+    def walk(node: object) -> None:
+        if isinstance(node, tuple) and node and all(isinstance(p, Pt) for p in node):
+            names = [p.name for p in node]
+            if len(names) == 2:
+                out.add(tuple(sorted(names)))
+            if len(names) in (3, 4):
+                ring = zip(names, names[1:] + names[:1], strict=True)
+                out.update(tuple(sorted(x)) for x in ring)
+        elif isinstance(node, tuple):
+            for x in node:
+                walk(x)
+        elif hasattr(node, "__dataclass_fields__"):
+            for f in node.__dataclass_fields__:
+                walk(getattr(node, f))
+
+    for line in (*sheet.given, *sheet.claims):
+        walk(line.body)
+    return out
+
+
+def _lengths(node: object) -> set[tuple[str, str]]:
+    """Lengths measured in a statement."""
+    out: set[tuple[str, str]] = set()
+
+    def walk(n: object) -> None:
+        if isinstance(n, Measure) and n.kind == "length":
+            a, b = sorted(str(p) for p in n.points)
+            out.add((a, b))
+        elif isinstance(n, tuple):
+            for x in n:
+                walk(x)
+        elif hasattr(n, "__dataclass_fields__"):
+            for f in n.__dataclass_fields__:
+                walk(getattr(n, f))
+
+    walk(node)
+    return out
+
+
+def _constants(sheet: Sheet) -> set[Fraction]:
+    """Ratios written in the hypotheses."""
+    out: set[Fraction] = set()
+
+    def walk(q: Quantity) -> None:
+        if isinstance(q, Binary):
+            if q.op in "*/" and isinstance(q.right, Number) and q.right.value > 0:
+                out.add(1 / q.right.value if q.op == "/" else q.right.value)
+            if q.op == "*" and isinstance(q.left, Number) and q.left.value > 0:
+                out.add(q.left.value)
+            walk(q.left)
+            walk(q.right)
+        elif isinstance(q, Unary):
+            walk(q.arg)
+
+    for line in sheet.given:
+        if isinstance(line.body, Comparison):
+            for item in line.body.items:
+                walk(item)
+    out.discard(Fraction(1))
+    return out
+
+
+def negated(c: Condition) -> Condition:
+    """The negation, without doubling."""
+    return c.arg if isinstance(c, Not) else Not(c)
+
+
+def all_of(cs: Sequence[Condition]) -> Condition:
+    """Conjunction."""
+    return cs[0] if len(cs) == 1 else And(tuple(cs))
+
+
+def any_of(cs: Sequence[Condition]) -> Condition:
+    """Disjunction."""
+    return cs[0] if len(cs) == 1 else Or(tuple(cs))

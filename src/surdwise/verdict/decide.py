@@ -1,0 +1,368 @@
+"""Decide a claim: survey the figure, name where the claim holds, prove the name."""
+
+from __future__ import annotations
+
+import time
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass, replace
+
+from ..field import exact
+from ..field.cells import TooManyCells
+from ..field.real import Branch, Unsettled
+from ..field.ring import PARAM_NAMES, TooLarge
+from ..figure.component import Component
+from ..figure.conditions import Judge, is_closed, is_open, truth
+from ..figure.program import Program, program
+from ..sheet.show import show
+from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
+from .candidates import Candidate, candidates
+from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
+from .spot import Undefined
+from .survey import OutOfTime, Place, Statement, Survey, Surveyor
+from .variants import patterns, signed, terms
+from .words import Lexicon, name, said
+
+PROOF_ROUNDS = 6
+NAMING_PLACES = 120
+
+
+def statement(c: Condition) -> Statement:
+    """A condition as something to be judged."""
+    return lambda j: truth(c, j)
+
+
+def agrees(claim: Condition, guess: Condition) -> Statement:
+    """Whether claim and guess are true or false together (an undefined guess disagrees)."""
+
+    def judge(j: Judge) -> bool:
+        t = truth(claim, j)
+        try:
+            return truth(guess, j) == t
+        except Undefined:
+            return False
+
+    return judge
+
+
+@dataclass
+class Case:
+    """The sheet's figure under examination for one claim."""
+
+    sheet: Sheet
+    program: Program
+    deadline: float
+    progress: Callable[[str], None]
+    lexicon: Lexicon | None = None
+
+    def survey(self, statements: Sequence[Statement], closed: bool) -> Survey:
+        """Survey all admitted figures for some statements."""
+        conditions: list[Condition] = [line.body for line in self.sheet.provided]  # type: ignore[misc]
+        return Surveyor(
+            self.program,
+            [statement(c) for c in conditions],
+            statements,
+            self.deadline,
+            closed=closed,
+            open_conditions=all(is_open(c) for c in conditions),
+            progress=self.progress,
+        ).run()
+
+    def words(self, found: Survey, claim: Condition) -> Lexicon:
+        """The figure's vocabulary, and the borders of the survey as a last resort."""
+        if self.lexicon is None:
+            comps = _distinct([p.comp for p in found.places])
+            last = [
+                Candidate(Relation("frame_sign", (p, op)), 4.0 + 0.2 * len(p))  # type: ignore[arg-type]
+                for p in found.borders.values()
+                if len(p) <= 60
+                for op in (">", "<", "=")
+            ]
+            self.lexicon = Lexicon([*candidates(self.sheet, comps, claim), *last])
+        return self.lexicon
+
+    def named(self, whats: Sequence[Condition], found: Survey) -> list[Condition | None]:
+        """For each statement (the i-th judged by the survey's i-th truth) a condition proved
+        equivalent to it on every admitted figure, or None.
+
+        Guess from the places, prove by a survey of the agreement, learn from the places where
+        they differ.
+        """
+        lexicon = self.words(found, whats[0])
+        pools = [_varied([(p, bool(p.truths[i])) for p in found.places]) for i in range(len(whats))]
+        answers: list[Condition | None] = [None] * len(whats)
+        open_ = set(range(len(whats)))
+        for _ in range(PROOF_ROUNDS):
+            guesses: dict[int, Condition] = {}
+            for i in sorted(open_):
+                pts = [p for p, _ in pools[i]]
+                target = sum(1 << k for k, (_, t) in enumerate(pools[i]) if t)
+                guess = name(target, (1 << len(pts)) - 1, lexicon.literals(pts, whats[i]))
+                if guess is not None:
+                    guesses[i] = guess
+            open_ = set(guesses)
+            if not guesses:
+                break
+            keys = list(guesses)
+            pairs: list[Statement] = [agrees(whats[i], guesses[i]) for i in keys]
+            proof = self.survey([*pairs, *(statement(whats[i]) for i in keys)], closed=False)
+            for k, i in enumerate(keys):
+                wrong = [p for p in proof.places if not p.truths[k]]
+                if wrong:
+                    pools[i] = [*pools[i], *((p, bool(p.truths[len(keys) + k])) for p in wrong[:30])]
+                else:
+                    answers[i] = guesses[i]
+                    open_.discard(i)
+        return answers
+
+
+def _distinct(comps: Sequence[Component]) -> list[Component]:
+    return list({id(c): c for c in comps}.values())
+
+
+def _varied(places: Sequence[tuple[Place, bool]]) -> Sequence[tuple[Place, bool]]:
+    """At most NAMING_PLACES places, both truths and all dimensions among them."""
+    if len(places) <= NAMING_PLACES:
+        return places
+    groups: dict[tuple[int, bool], list[tuple[Place, bool]]] = {}
+    for p, t in places:
+        groups.setdefault((p.dimension, t), []).append((p, t))
+    share = NAMING_PLACES // len(groups)
+    out: list[tuple[Place, bool]] = []
+    for g in groups.values():
+        step = max(len(g) // share, 1)
+        out += g[::step][:share]
+    return out
+
+
+def verdict_of(places: Sequence[Place], i: int) -> Verdict:
+    """The verdict on statement i from all places."""
+    if not places:
+        return Verdict.EMPTY
+    full = max(p.dimension for p in places)
+    if all(p.truths[i] for p in places):
+        return Verdict.HOLDS
+    if any(p.truths[i] for p in places if p.dimension == full):
+        return Verdict.CONDITIONAL
+    return Verdict.FAILS
+
+
+def figure(p: Place) -> Figure:
+    """The witness figure of a place."""
+    return {
+        n: PlacedPoint(
+            (exact.text(v.x, p.branch), exact.text(v.y, p.branch)),
+            (p.branch.approx(v.x), p.branch.approx(v.y)),
+        )
+        for n, v in p.comp.points.items()
+    }
+
+
+def witness(places: Sequence[Place], i: int, value: bool) -> Figure | None:
+    """A figure with the given truth: of full dimension if possible, then the plainest."""
+    fit = [p for p in places if p.truths[i] == value]
+    if not fit:
+        return None
+    top = max(p.dimension for p in fit)
+    best = sorted((p for p in fit if p.dimension == top), key=lambda p: _plainness(p.branch))[:6]
+    figures = [figure(p) for p in best]
+    return min(figures, key=lambda f: sum(len(q.exact[0]) + len(q.exact[1]) for q in f.values()))
+
+
+def _plainness(b: Branch) -> int:
+    return 40 * len(b.path) + sum(len(str(v)) for v in b.values.values())
+
+
+def decide(
+    sheet: Sheet,
+    time_limit: float = 60.0,
+    progress: Callable[[str], None] = lambda text: None,
+) -> tuple[Decision, ...]:
+    """Decide every claim of a sheet; `time_limit` seconds for each claim."""
+    return tuple(decide_claim(sheet, line, time_limit, progress) for line in sheet.claims)
+
+
+def decide_claim(
+    sheet: Sheet, line: Line, time_limit: float, progress: Callable[[str], None] = lambda text: None
+) -> Decision:
+    """Decide one claim."""
+    start = time.monotonic()
+    claim: Condition = line.body  # type: ignore[assignment]
+    blank = Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
+    try:
+        case = Case(sheet, program(sheet), start + time_limit, progress)
+        out = _decided(case, claim, blank)
+    except OutOfTime:
+        out = replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
+    except (TooLarge, TooManyCells, Unsettled) as e:
+        out = replace(blank, reason=str(e))
+    return replace(out, seconds=round(time.monotonic() - start, 6))
+
+
+def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
+    parts = _links(claim)
+    equalities = [_equality(c) for c in parts]
+    whats = [claim]
+    if len(parts) > 1:
+        whats += parts
+    whats += [c for c in equalities if c is not None]
+    # the continuity lemma speaks of the claim alone
+    plain = len(whats) == 1 and is_closed(claim)
+    found = case.survey([statement(c) for c in whats], closed=plain)
+    verdict = verdict_of(found.places, 0)
+    out = replace(
+        blank,
+        verdict=verdict,
+        parameters=_parameters(case.program, found),
+        frame=_frame(case.program, found),
+        degenerate=_degenerate(found),
+    )
+    if verdict is Verdict.EMPTY:
+        return replace(out, reason=_why_empty(case, found))
+    out = replace(out, holds_at=witness(found.places, 0, True), fails_at=witness(found.places, 0, False))
+    try:
+        return _explained(case, whats, parts, found, out)
+    except OutOfTime:
+        return replace(out, reason="the verdict is proved; naming where it holds ran out of time")
+
+
+def _explained(
+    case: Case, whats: list[Condition], parts: Sequence[Condition], found: Survey, out: Decision
+) -> Decision:
+    """The decision with its side condition, equality cases, links and variants."""
+    claim = whats[0]
+    forms: list[Condition] = []
+    if out.verdict is not Verdict.HOLDS and len(parts) == 1 and isinstance(claim, Comparison):
+        forms = _signed_forms(claim)
+    if forms:
+        first = case.survey([statement(c) for c in (*whats, *forms)], closed=False)
+        full = max(p.dimension for p in first.places)
+        keep = [
+            i
+            for i in range(len(whats) + len(forms))
+            if i < len(whats) or any(p.truths[i] for p in first.places if p.dimension == full)
+        ]
+        found = _only(first, keep)
+        forms = [forms[i - len(whats)] for i in keep[len(whats) :]]
+        whats = [*whats, *forms]
+    said_ = _where(case, whats, found)
+    n = len(whats) - len(forms)
+    where, exact_ = [w for w, _ in said_], [e for _, e in said_]
+    if out.verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
+        out = replace(out, condition=where[0])
+    if len(parts) == 1 and n == 2:
+        out = replace(out, equality=where[1])
+    if len(parts) > 1:
+        links = []
+        k = 1 + len(parts)
+        for i, c in enumerate(parts, start=1):
+            same = None
+            if _equality(c) is not None:
+                same = where[k]
+                k += 1
+            v = verdict_of(found.places, i)
+            links.append(
+                Link(
+                    show(c),
+                    v,
+                    where[i] if v in (Verdict.CONDITIONAL, Verdict.FAILS) else None,
+                    same,
+                    witness(found.places, i, True),
+                    witness(found.places, i, False),
+                )
+            )
+        out = replace(out, links=tuple(links))
+    variants = tuple(
+        Variant(show(c), where[n + i], exact_[n + i], witness(found.places, n + i, True))
+        for i, c in enumerate(forms)
+    )
+    return replace(out, variants=variants)
+
+
+def _only(s: Survey, keep: Sequence[int]) -> Survey:
+    """The survey with some of its statements."""
+    places = [replace(p, truths=tuple(p.truths[i] for i in keep)) for p in s.places]
+    return replace(s, places=places)
+
+
+def _where(case: Case, whats: Sequence[Condition], found: Survey) -> list[tuple[str | None, bool]]:
+    """Where each statement holds, in words, and whether the words are exact on thin sets too."""
+    out: list[tuple[str | None, bool]] = [(None, True)] * len(whats)
+    todo = []
+    for i in range(len(whats)):
+        truths = {bool(p.truths[i]) for p in found.places}
+        if truths == {True}:
+            out[i] = ("always", True)
+        elif truths == {False}:
+            out[i] = ("never", True)
+        else:
+            todo.append(i)
+    if todo:
+        answers = case.named([whats[i] for i in todo], _only(found, todo))
+        for i, c in zip(todo, answers, strict=True):
+            out[i] = (None if c is None else said(c), True)
+    return out
+
+
+def _links(claim: Condition) -> list[Condition]:
+    if not isinstance(claim, Comparison) or len(claim.ops) == 1:
+        return [claim]
+    return [Comparison((claim.items[i], claim.items[i + 1]), (op,)) for i, op in enumerate(claim.ops)]
+
+
+def _equality(c: Condition) -> Condition | None:
+    """The equality case of an inequality."""
+    if isinstance(c, Comparison) and c.ops[0] != "=":
+        return Comparison(c.items, ("=",))
+    return None
+
+
+def _signed_forms(claim: Comparison) -> list[Condition]:
+    """Signed forms of an equality."""
+    ts = terms(claim)
+    if ts is None:
+        return []
+    return [c for c in (signed(ts, p) for p in patterns(ts)) if c is not None]
+
+
+# ---------------------------------------------------------------- words about the figure
+
+
+def _parameters(prog: Program, found: Survey) -> tuple[str, ...]:
+    used = sorted({k for p in found.places for k in p.comp.free})
+    return tuple(f"{PARAM_NAMES[k]}: {prog.frame.labels.get(k, '')}" for k in used)
+
+
+def _frame(prog: Program, found: Survey) -> str:
+    for p in found.places[:1]:
+        spots = []
+        for n, v in list(p.comp.points.items())[:3]:
+            spots.append(f"{n} = ({_coordinate(v.x)}, {_coordinate(v.y)})")
+        scale = "" if prog.frame.keeps_scale else ", up to similarity"
+        return "Cartesian: " + ", ".join(spots) + scale
+    return "Cartesian"
+
+
+def _coordinate(e: object) -> str:
+    text = repr(e)[1:-1]
+    return text if len(text) <= 40 else "..."
+
+
+def _degenerate(found: Survey) -> tuple[str, ...]:
+    """Positions at which a made point or the claim is not defined, in words."""
+    words: list[str] = []
+    if found.top is not None:
+        for c in found.top.components:
+            shut = {r.element.key() for r in c.requires}
+            for g in c.guards:
+                if g.element.key() not in shut and g.words not in words:
+                    words.append(g.words)
+    words += [w for w in sorted(found.undefined) if w not in words]
+    words += [f"{w}: not examined" for w in found.not_examined]
+    return tuple(words)
+
+
+def _why_empty(case: Case, found: Survey) -> str:
+    if not found.dead:
+        return "no real figure meets every line of the sheet"
+    step, why = max(found.dead)
+    return f"line {case.program.lines[step].span.line}: {why}"
