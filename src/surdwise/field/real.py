@@ -70,21 +70,6 @@ class Branch:
             prec *= 2
         raise Unsettled("no precision separates the value from zero")
 
-    def hint(self, e: Element) -> int | None:
-        """Sign by one ball at moderate precision; None when it contains zero.  A hint."""
-        if e.is_zero():
-            return 0
-        den = ring.value_of(self.at_sample(e.den))
-        if den == 0:
-            return None
-        num = self.at_sample(e.num)
-        if ring.is_constant(num):
-            ball = arb(ring.value_of(num))
-        else:
-            ball = self._ball(num, e.tower, 192)
-        s = 1 if ball > 0 else -1 if ball < 0 else None
-        return None if s is None else s * (1 if den > 0 else -1)
-
     def ball(self, e: Element, prec: int = START_PREC) -> arb:
         """Certified enclosure of the value of e."""
         with ctx.workprec(prec):

@@ -48,7 +48,11 @@ class _Fork(Exception):
 
 @dataclass
 class Component:
-    """One component of the figure so far."""
+    """One component of the figure so far.
+
+    `memo` keeps inverses and norms found while the finished component is read; a component
+    under construction has none, since its branches differ.
+    """
 
     tower: Tower
     values: dict[int, Element]
@@ -59,6 +63,8 @@ class Component:
     guards: tuple[Guard, ...] = ()
     positive: frozenset[int] = frozenset()
     folded: frozenset[int] = frozenset()
+    memo: dict[str, Element] = field(default_factory=dict)
+    factors: dict[str, dict[str, Poly]] = field(default_factory=dict)
 
     def copy(self) -> Component:
         """A component that can be built on without touching this one."""
@@ -89,6 +95,10 @@ class Frame:
     keeps_scale: bool
     slots: dict[tuple[int, int], int] = field(default_factory=dict)
     labels: dict[int, str] = field(default_factory=dict)
+    whole: set[int] = field(default_factory=set)
+    halved: set[int] = field(default_factory=set)
+
+    # `halved` are parameters that every run so far asked to be non-negative; `whole` the others
 
     def slot(self, step: int, j: int, label: str) -> int:
         """The parameter of the j-th request of a step, the same at every run."""
@@ -121,6 +131,8 @@ class Builder(Reader):
         [0, oo), the point zero being examined as a stratum of its own."""
         k = self.frame.slot(self.step, self._asked, label)
         self._asked += 1
+        (self.frame.halved if positive or folded else self.frame.whole).add(k)
+        self.frame.halved -= self.frame.whole
         if k in self.comp.values:
             e = self.comp.values[k]
             if positive or folded:

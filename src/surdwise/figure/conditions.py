@@ -12,7 +12,6 @@ from typing import Any
 
 from ..field.tower import Element
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Pt, Relation
-from .base import Base, plug
 from .plane import Straight, Vec, cross, dot, orientation, square
 from .quantities import difference
 from .reader import Reader
@@ -27,6 +26,10 @@ class Judge(Reader):
 
     def weak_sign(self, e: Element) -> int:
         """The same, for a comparison that admits equality."""
+        raise NotImplementedError
+
+    def polynomial(self, p: Any) -> Element:
+        """The value of a polynomial in the frame's parameters."""
         raise NotImplementedError
 
     def zero(self, e: Element) -> bool:
@@ -224,7 +227,7 @@ def _is_isosceles(j: Judge, tri: tuple[Pt, ...], apex: Pt) -> bool:
 
 def _frame_sign(j: Judge, p: Any, op: str) -> bool:
     """A comparison of a polynomial in the frame's parameters with zero."""
-    e = plug(p, Base(j.comp.tower, j.comp.values))
+    e = j.polynomial(p)
     if op == "=":
         return j.zero(e)
     return j.sign(e) == (1 if op == ">" else -1)

@@ -12,6 +12,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 
 from ..field import cells, ring, roots
+from ..field.real import branches
 from ..field.ring import Poly
 from ..field.tower import Element
 from ..sheet.tree import Comparison, Fact, Line, Relation, Sheet
@@ -40,6 +41,7 @@ class Program:
 
     lines: tuple[Line, ...]
     frame: Frame
+    runs: dict[object, Run] = field(default_factory=dict)
 
     def run(
         self,
@@ -48,12 +50,25 @@ class Program:
         excluded: Sequence[Poly] = (),
         tick: Callable[[], None] = lambda: None,
     ) -> Run:
-        """All components over the stratum where `eqs` vanish and `excluded` do not."""
+        """All components over the stratum where `eqs` vanish and `excluded` do not; a stratum
+        is run once in the life of the program."""
+        name = tuple(map(ring.key, eqs)), missed, frozenset(map(ring.key, excluded))
+        if name not in self.runs:
+            self.runs[name] = self._run(eqs, missed, excluded, tick)
+        return self.runs[name]
+
+    def _run(
+        self,
+        eqs: Sequence[Poly],
+        missed: frozenset[int],
+        excluded: Sequence[Poly],
+        tick: Callable[[], None],
+    ) -> Run:
         out = Run()
         for base in solve(eqs):
             tick()
             comp = self._ground(base, excluded)
-            if comp is None:
+            if comp is None or not self._is_real(base):
                 continue
             lead_borders: dict[str, Poly] = {}
             for e in base.leads:
@@ -77,6 +92,18 @@ class Program:
                 out.components.append(c)
                 out.borders.append({**lead_borders, **figure_borders(c)})
         return out
+
+    def _is_real(self, base: Base) -> bool:
+        """Whether a base without free parameters has a real point with every parameter in its
+        range; True for any other base."""
+        bound = {k for g in base.tower.gens for k in ring.params_in(g.modulus)}
+        if not base.tower.gens or bound or any(ring.params_in(e.num) for e in base.values.values()):
+            return True
+        for branch in branches(base.tower, {}):
+            signs = {k: branch.sign(e) for k, e in base.values.items() if k in self.frame.halved}
+            if all(s >= 0 for s in signs.values()):
+                return True
+        return False
 
     def _ground(self, base: Base, excluded: Sequence[Poly]) -> Component | None:
         requires = []

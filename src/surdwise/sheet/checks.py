@@ -112,7 +112,9 @@ def _check_list(form: str, points: Sequence[Pt]) -> None:
     fewest = FEWEST.get(form, 1)
     if len(points) < fewest:
         count = _COUNTS.get(len(points), "one")
-        raise Problem(extent(points), f"expected at least {_COUNTS[fewest]} points that are {form}, got {count}")
+        raise Problem(
+            extent(points), f"expected at least {_COUNTS[fewest]} points that are {form}, got {count}"
+        )
     _check_run(points)
 
 

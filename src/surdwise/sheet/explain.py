@@ -17,7 +17,10 @@ from .table import Table
 from .terms import RUN_WORDS, expected, got
 from .tree import And, Comparison, Relation, Span
 
-_SHAPE_OF = {"is_equilateral": "equilateral triangle {0}", "is_isosceles": "isosceles triangle {0} with apex {1}"}
+_SHAPE_OF = {
+    "is_equilateral": "equilateral triangle {0}",
+    "is_isosceles": "isosceles triangle {0} with apex {1}",
+}
 _HOW_MANY = {"POINT": "one point", "PAIR": "two points", "TRIPLE": "three points", "QUAD": "four points"} | {
     "QUINT": "five points",
     "HEXA": "six points",
@@ -40,9 +43,11 @@ class Statement:
 def explain(table: Table, statement: Statement, failure: Unexpected) -> Problem:
     """The problem with a statement that failed to parse under its keyword.
 
-    Tried in this order: the statement belongs under another keyword; it gets further under
-    that; advice from a lesson; a word misspelled one step earlier; what was expected here.
+    Tried in this order: advice from a lesson; the statement belongs under another keyword, or
+    gets further under that; a word misspelled one step earlier; what was expected here.
     """
+    if _advice(table, failure, statement.source):
+        return _explain_here(table, statement, failure)
     other = "provided" if statement.keyword == "given" else "given"
     try:
         parsed = parse(table, other, statement.source, statement.start, statement.stop, statement.line)
@@ -52,8 +57,14 @@ def explain(table: Table, statement: Statement, failure: Unexpected) -> Problem:
         if elsewhere.count <= failure.count:
             return _explain_here(table, statement, failure)
         problem = _explain_here(table, statement, elsewhere)
-        belongs = "conditions belong under `provided`" if other == "provided" else "constructions belong under `given`"
-        return Problem(problem.span, problem.message, f"{problem.hint}; {belongs}" if problem.hint else belongs)
+        belongs = (
+            "conditions belong under `provided`"
+            if other == "provided"
+            else "constructions belong under `given`"
+        )
+        return Problem(
+            problem.span, problem.message, f"{problem.hint}; {belongs}" if problem.hint else belongs
+        )
     return _misplaced(statement, parsed)
 
 
@@ -61,7 +72,11 @@ def _misplaced(statement: Statement, parsed: Parsed) -> Problem:
     """A whole statement under the wrong keyword."""
     body = parsed.body
     span = Span(statement.line, statement.start + 1, statement.stop + 1)
-    text = statement.source[statement.start : statement.stop] if statement.stop - statement.start <= _SHORT else "..."
+    text = (
+        statement.source[statement.start : statement.stop]
+        if statement.stop - statement.start <= _SHORT
+        else "..."
+    )
     if statement.keyword != "given":
         what = "condition" if statement.keyword == "provided" else "statement to decide"
         message = f"expected a {what} under `{statement.keyword}`, got a construction"
@@ -70,7 +85,9 @@ def _misplaced(statement: Statement, parsed: Parsed) -> Problem:
         message = "expected one equation under `given`, got a chain"
         return Problem(span, message, "write one given line for each link")
     if isinstance(body, And) and all(_is_relation(arg) for arg in body.args):
-        return Problem(span, "expected one relation under `given`, got several", "write one given line for each")
+        return Problem(
+            span, "expected one relation under `given`, got several", "write one given line for each"
+        )
     message = "expected a construction or relation under `given`, got a condition"
     hint = f"conditions belong under `provided`: provided {text}"
     if isinstance(body, Relation) and body.form in _SHAPE_OF:
@@ -117,8 +134,9 @@ def _wanted(table: Table, states: tuple[int, ...], kinds: frozenset[str]) -> str
 
 def _advice(table: Table, failure: Unexpected, source: str) -> str:
     """The advice of the first lesson that goes wrong at the same place on the same word, or ""."""
-    token, state = failure.token, resting(table, failure.states)[-1]
+    token = failure.token
     before = failure.before.text if failure.before else ""
+    last, state = failure.states[-1], resting(table, failure.states)[-1]
     for lesson in LESSONS:
         if lesson.look and not re.compile(lesson.look).match(source, token.column - 1):
             continue
@@ -128,7 +146,8 @@ def _advice(table: Table, failure: Unexpected, source: str) -> str:
             stopped = _stopped(table, lesson.keyword, example)
             if stopped is None or stopped.token.kind != token.kind:
                 continue
-            if resting(table, stopped.states)[-1] == state:
+            same = lesson.loose or stopped.states[-1] == last
+            if same and resting(table, stopped.states)[-1] == state:
                 return lesson.advice
     return ""
 
@@ -186,7 +205,9 @@ def _next_step(table: Table, statement: Statement, failure: Unexpected, kinds: f
         return "a length has a bar on either side: |AB|"
     if token.kind == "NAME" and any(kind in RUN_WORDS for kind in kinds) and token.text.isalnum():
         fits = token.text.isalpha() and len(token.text) <= len(RUNS) and RUNS[len(token.text) - 1] in kinds
-        return "points are capitals" + (f": did you mean {token.text.upper()}?" if fits else ", such as A, B2 or C'")
+        return "points are capitals" + (
+            f": did you mean {token.text.upper()}?" if fits else ", such as A, B2 or C'"
+        )
     if token.kind == ")":
         text = statement.source[statement.start : token.column - 1]
         return "a parenthesis too many" if text.count("(") <= text.count(")") else ""
@@ -210,7 +231,9 @@ def _missing(table: Table, failure: Unexpected, kinds: frozenset[str]) -> str:
         return ""
     fitting = []
     for kind in sorted(kinds):
-        if kind in table.words and failure.token.kind in acceptable(table, after(table, failure.states, kind)):
+        if kind in table.words and failure.token.kind in acceptable(
+            table, after(table, failure.states, kind)
+        ):
             fitting.append(kind)
     return fitting[0] if len(fitting) == 1 else ""
 
@@ -226,4 +249,3 @@ def _superfluous(table: Table, statement: Statement, failure: Unexpected) -> boo
     except Unexpected as later:
         return later.count > failure.count
     return True
-

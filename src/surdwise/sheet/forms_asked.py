@@ -37,7 +37,9 @@ def _reference(alias: str, example: str, meaning: str, args: tuple[str, ...], pa
 
 RELATIONS = (
     _relation("collinear", "A, B, C collinear", "on one line", ("points",), "{0} collinear"),
-    _relation("concyclic", "A, B, C, D concyclic", "on one circle, in any order", ("points",), "{0} concyclic"),
+    _relation(
+        "concyclic", "A, B, C, D concyclic", "on one circle, in any order", ("points",), "{0} concyclic"
+    ),
     _relation(
         "parallel_lines",
         "AB parallel to CD",
@@ -69,8 +71,12 @@ CONDITIONS = (
         ("point", "point", "point"),
         "{0} between {1} and {2}",
     ),
-    _condition("inside", "P inside ABC", "strictly inside the triangle", ("point", "triple"), "{0} inside {1}"),
-    _condition("outside", "P outside ABC", "strictly outside the triangle", ("point", "triple"), "{0} outside {1}"),
+    _condition(
+        "inside", "P inside ABC", "strictly inside the triangle", ("point", "triple"), "{0} inside {1}"
+    ),
+    _condition(
+        "outside", "P outside ABC", "strictly outside the triangle", ("point", "triple"), "{0} outside {1}"
+    ),
     _condition(
         "same_side",
         "P and Q on the same side of AB",
@@ -129,9 +135,15 @@ CONDITIONS = (
 
 QUANTITIES = (
     _quantity("length", "|AB|", "the distance of two points, never negative", ("pair",), "|{0}|"),
-    _quantity("dist", "dist(P, BC)", "the distance of a point to a whole line", ("place", "line"), "dist({0}, {1})"),
     _quantity(
-        "area", "area(ABC)", "the area of a triangle or quadrilateral, never negative", ("triple",), "area({0})"
+        "dist", "dist(P, BC)", "the distance of a point to a whole line", ("place", "line"), "dist({0}, {1})"
+    ),
+    _quantity(
+        "area",
+        "area(ABC)",
+        "the area of a triangle or quadrilateral, never negative",
+        ("triple",),
+        "area({0})",
     ),
     _quantity(
         "perimeter",
@@ -143,7 +155,9 @@ QUANTITIES = (
     _quantity(
         "circumradius", "circumradius(ABC)", "the radius of the circle ABC", ("triple",), "circumradius({0})"
     ),
-    _quantity("inradius", "inradius(ABC)", "the radius of the inscribed circle", ("triple",), "inradius({0})"),
+    _quantity(
+        "inradius", "inradius(ABC)", "the radius of the inscribed circle", ("triple",), "inradius({0})"
+    ),
     _quantity(
         "exradius",
         "exradius(ABC, A)",

@@ -113,7 +113,9 @@ SHAPES = (
         "right triangle {0} with right angle at {1}",
         (0, 1),
     ),
-    _shape("square", "square ABCD", "four equal sides and right angles, corners in order", "quad", "square {0}"),
+    _shape(
+        "square", "square ABCD", "four equal sides and right angles, corners in order", "quad", "square {0}"
+    ),
     _shape("rectangle", "rectangle ABCD", "four right angles, corners in order", "quad", "rectangle {0}"),
     _shape(
         "parallelogram",
@@ -227,9 +229,15 @@ MADE = (
         ("triple",),
         "circumcentre of {1}",
     ),
-    _made("orthocentre", "H = orthocentre of ABC", "where the altitudes meet", ("triple",), "orthocentre of {1}"),
     _made(
-        "incentre", "I = incentre of ABC", "the centre of the inscribed circle", ("triple",), "incentre of {1}"
+        "orthocentre", "H = orthocentre of ABC", "where the altitudes meet", ("triple",), "orthocentre of {1}"
+    ),
+    _made(
+        "incentre",
+        "I = incentre of ABC",
+        "the centre of the inscribed circle",
+        ("triple",),
+        "incentre of {1}",
     ),
     _made(
         "excentre",

@@ -14,7 +14,7 @@ KEYWORDS = ("title", "source", "given", "provided", "claim")
 _MEANT = {
     "given": "let suppose assume hypothesis hypotheses figure construct draw take with",
     "provided": "where when if condition conditions assuming case such restrict",
-    "claim": "prove show thesis then conclusion theorem statement proposition goal conclude assert so therefore",
+    "claim": "prove show thesis then conclusion theorem statement proposition goal conclude so therefore",
     "title": "name heading",
     "source": "from printed reference origin",
 }
@@ -40,9 +40,15 @@ def _hint(table: Table, source: str, start: int, stop: int, first: str) -> str:
         rest = first[len(word) :]
         if not rest:
             return f"did you mean `{word}`? (keywords are lower case)"
-        return f"write `{word}` and a space, without {rest[0]}" if not rest[0].isalnum() else f"did you mean `{word}`?"
+        return (
+            f"write `{word}` and a space, without {rest[0]}"
+            if not rest[0].isalnum()
+            else f"did you mean `{word}`?"
+        )
     text = source[start:stop]
-    fitting = [f"`{keyword} {text}`" for keyword in ("given", "provided", "claim") if _reads(table, keyword, text)]
+    fitting = [
+        f"`{keyword} {text}`" for keyword in ("given", "provided", "claim") if _reads(table, keyword, text)
+    ]
     if fitting and len(text) <= 80:
         return "the keyword is missing: write " + " or ".join(fitting)
     if first in table.words or not word:

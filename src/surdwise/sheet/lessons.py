@@ -17,7 +17,8 @@ class Lesson:
     """Advice for what goes wrong in the examples (each under the keyword).
 
     Where `look` is given, it is a pattern that the text must match from the wrong word on;
-    `behind` is one that the word before it must match.
+    `behind` is one that the word before it must match.  A loose lesson is about what may come
+    next, not about the word that came last.
     """
 
     keyword: str
@@ -25,6 +26,7 @@ class Lesson:
     advice: str
     look: str = ""
     behind: str = ""
+    loose: bool = False
 
 
 @dataclass(frozen=True)
@@ -46,17 +48,24 @@ _ARC = "for an arc write `P on circle ABC` under given, and `P and C on opposite
 _ANGLES = "angles are compared by cos or sin, as in cos(BAC) = 1/2; for sizes write `angle BAC acute`"
 _ANGLE_POINTS = "an angle has three points, with its vertex in the middle: BAC"
 _PARENTHESES = "the points stand in parentheses, as in area(ABC) or median(ABC, A)"
-_FUNCTIONS = "the functions are area, perimeter, circumradius, inradius, exradius, dist, cos, sin, sqrt and abs"
+_FUNCTIONS = (
+    "the functions are area, perimeter, circumradius, inradius, exradius, dist, cos, sin, sqrt and abs"
+)
 _UNKNOWN_NUMBER = "letters do not stand for numbers: write what is meant, such as circumradius(ABC)"
 _COINCIDE = "for points that coincide write |AB| = 0"
 _NOT_FIRST = "`not` stands before the whole condition: not P on line AB"
 _ONE_POINT = "one point a line: P on circle k"
 _FIRST_THE_NAME = "first the name, then what it is: X = midpoint of AB"
+_FIRST_THE_SHAPE = "first what it is, then its points: triangle ABC"
 _THE = "leave out `the`"
 _ASSUMPTION = "write the assumption behind `provided`"
 
 LESSONS = (
-    Lesson("claim", ("AB = CD", "AB < CD", "AB + CD = 1", "AB - CD = 1", "AB*2 = 1", "AB/2 = 1", "AB^2 = 1"), _BARS),
+    Lesson(
+        "claim",
+        ("AB = CD", "AB < CD", "AB + CD = 1", "AB - CD = 1", "AB*2 = 1", "AB/2 = 1", "AB^2 = 1"),
+        _BARS,
+    ),
     Lesson(
         "claim",
         ("|AB| = CD", "|AB| + CD = 1", "|AB|*CD = 1", "|AB|/CD = 1", "2AB = 1", "-AB = 1", "1/2AB = 1"),
@@ -64,13 +73,14 @@ LESSONS = (
     ),
     Lesson("given", ("|AB| = CD", "2AB = 1", "AB = 1", "sqrt(AB) = 1"), _BARS),
     Lesson("claim", tuple(f"|AB|/2{f} = 1" for f in ("|CD|", *_FUNCTION_EXAMPLES)), _TWO_READINGS),
-    Lesson("claim", tuple(f"|AB| {f} = 1" for f in ("|CD|", "2", *_FUNCTION_EXAMPLES)), _SIGN),
-    Lesson("claim", tuple(f"sqrt(3){f} = 1" for f in ("|CD|", "2", *_FUNCTION_EXAMPLES)), _SIGN),
-    Lesson("claim", tuple(f"(|AB| + 1){f} = 1" for f in ("|CD|", "2", *_FUNCTION_EXAMPLES)), _SIGN),
-    Lesson("claim", tuple(f"|AB|*2 {f} = 1" for f in ("|CD|", *_FUNCTION_EXAMPLES)), _SIGN),
+    Lesson("claim", tuple(f"|AB| {f} = 1" for f in ("|CD|", "2", *_FUNCTION_EXAMPLES)), _SIGN, loose=True),
+    Lesson("claim", tuple(f"|AB| = |CD| {f}" for f in ("|EF|", "2", *_FUNCTION_EXAMPLES)), _SIGN, loose=True),
+    Lesson("claim", tuple(f"(|AB| {f} = 1" for f in ("|CD|", "2", *_FUNCTION_EXAMPLES)), _SIGN, loose=True),
     Lesson("claim", ("|AB|^2^2 = 1",), "powers of powers need parentheses: (|AB|^2)^2"),
     Lesson("claim", ("|AB| = 3,5",), "decimals are written with a point: 3.5", r",[0-9]"),
-    Lesson("claim", ("|A B| = 1", "cos(A B C) = 1", "area(A, B, C) = 1"), _TOGETHER, r"[A-Z][0-9']*[ ,]+[A-Z]"),
+    Lesson(
+        "claim", ("|A B| = 1", "cos(A B C) = 1", "area(A, B, C) = 1"), _TOGETHER, r"[A-Z][0-9']*[ ,]+[A-Z]"
+    ),
     Lesson(
         "given",
         ("triangle A, B, C", "square A, B, C, D", "quadrilateral A, B, C, D", "M = midpoint of A, B"),
@@ -78,37 +88,61 @@ LESSONS = (
         r"[A-Z][0-9']*[ ,]+[A-Z]",
     ),
     Lesson("given", ("M = midpoint of A and B",), "write the two points together: midpoint of AB"),
-    Lesson("claim", ("A B C collinear", "ABC collinear", "ABCD concyclic", "ABC concyclic", "AB distinct"), _COMMAS),
+    Lesson(
+        "claim",
+        ("A B C collinear", "ABC collinear", "ABCD concyclic", "ABC concyclic", "AB distinct"),
+        _COMMAS,
+    ),
     Lesson("claim", ("ABC distinct", "ABCD distinct", "ABCD collinear", "AB collinear"), _COMMAS),
     Lesson("given", ("points A B", "points ABC", "point AB", "points A and B"), _COMMAS),
-    Lesson("claim", ("|AB| = 3 cm",), "lengths have no unit here: leave it out", r"(mm|cm|dm|m|km|in|ft|pt)\b"),
+    Lesson(
+        "claim", ("|AB| = 3 cm",), "lengths have no unit here: leave it out", r"(mm|cm|dm|m|km|in|ft|pt)\b"
+    ),
     Lesson("claim", ("angle ABC = 1", "angle ABC < 1", "|AB| = angle ABC", "angle ABC + 1"), _ANGLES),
     Lesson("claim", ("cos(A) = 1", "sin(A) = 1", "angle A acute"), _ANGLE_POINTS, r"[A-Z][0-9']*[ )]"),
-    Lesson("given", ("P on bisector of angle A", "l = bisector of angle A"), _ANGLE_POINTS, r"[A-Z][0-9']*\s*$"),
+    Lesson(
+        "given", ("P on bisector of angle A", "l = bisector of angle A"), _ANGLE_POINTS, r"[A-Z][0-9']*\s*$"
+    ),
     Lesson("given", ("M is midpoint of AB",), "write M = midpoint of AB", r"(is|be|as)\b"),
     Lesson("given", ("let M = midpoint of AB",), "start with what the line says: M = midpoint of AB"),
     Lesson("given", ("P on arc AB",), _ARC, r"arc\b"),
     Lesson("given", ("P on arc ABC", "P on arc A"), "for an arc write circle: P on circle ABC"),
     Lesson("claim", ("P on arc AB", "P on arc ABC"), _ARC),
-    Lesson("given", tuple(f"P on {word} of ABC" for word in ("incircle", "excircle", "circumcircle")), _NAME_IT),
-    Lesson("claim", tuple(f"P on {word} of ABC" for word in ("incircle", "excircle", "circumcircle")), _NAME_IT),
+    Lesson(
+        "given", tuple(f"P on {word} of ABC" for word in ("incircle", "excircle", "circumcircle")), _NAME_IT
+    ),
+    Lesson(
+        "claim", tuple(f"P on {word} of ABC" for word in ("incircle", "excircle", "circumcircle")), _NAME_IT
+    ),
     Lesson("given", ("P, Q on circle ABC", "P, Q inside triangle ABC"), _ONE_POINT),
     Lesson("provided", ("P and Q on circle k", "P and Q on line l", "P and Q on segment AB"), _ONE_POINT),
     Lesson("provided", ("P and Q inside ABC",), "one condition for each point, joined by `and`"),
     Lesson(
         "claim",
-        tuple(f"{word} {rest}" for word in ("area", "perimeter", "circumradius") for rest in ("ABC", "of", "triangle")),
+        tuple(
+            f"{word} {rest}"
+            for word in ("area", "perimeter", "circumradius")
+            for rest in ("ABC", "of", "triangle")
+        ),
         _PARENTHESES,
     ),
     Lesson(
         "claim",
-        tuple(f"{word} {rest}" for word in ("inradius", "median", "altitude") for rest in ("ABC", "of", "from")),
+        tuple(
+            f"{word} {rest}" for word in ("inradius", "median", "altitude") for rest in ("ABC", "of", "from")
+        ),
         _PARENTHESES,
     ),
-    Lesson("claim", ("cos ABC = 1", "sin ABC = 1", "cos A = 1", "sin A = 1", "sqrt 3 = 1"), "write cos(BAC), sqrt(3)"),
+    Lesson(
+        "claim",
+        ("cos ABC = 1", "sin ABC = 1", "cos A = 1", "sin A = 1", "sqrt 3 = 1"),
+        "write cos(BAC), sqrt(3)",
+    ),
     Lesson("claim", ("area(triangle ABC) = 1", "perimeter(triangle ABC) = 1"), "only the points: area(ABC)"),
-    Lesson("claim", ("dist(AB) = 1", "dist(A, B) = 1"), "dist(P, AB) is to a line; between points write |AB|"),
-    Lesson("claim", ("P = Q",), _COINCIDE),
+    Lesson(
+        "claim", ("dist(AB) = 1", "dist(A, B) = 1"), "dist(P, AB) is to a line; between points write |AB|"
+    ),
+    Lesson("claim", ("P = Q",), _COINCIDE, r"=\s*[A-Z][0-9']*\s*(and\b|or\b|$)"),
     Lesson("given", ("P = Q",), _COINCIDE),
     Lesson("claim", ("|AB| = tan(1)", "2tan(1) = 1", "|AB| + tan(1) = 1"), _FUNCTIONS, r"[a-z]+\("),
     Lesson("claim", ("tan(1) = 1",), _FUNCTIONS),
@@ -122,7 +156,11 @@ LESSONS = (
     Lesson("claim", ("P inside circle ABC", "P inside k"), "inside a circle with centre O: |OP| < |OA|"),
     Lesson("given", ("P inside circle ABC", "P inside k"), "under provided, with the centre O: |OP| < |OA|"),
     Lesson("claim", ("AB and CD parallel",), "write `AB parallel to CD` or `AB perpendicular to CD`"),
-    Lesson("given", ("l parallel to AB through C", "l perpendicular to AB through C"), "a new line needs =: l = ..."),
+    Lesson(
+        "given",
+        ("l parallel to AB through C", "l perpendicular to AB through C"),
+        "a new line needs =: l = ...",
+    ),
     Lesson("given", ("point P on circle k", "point M = midpoint of AB"), "leave out `point`"),
     Lesson("given", ("circle ABC", "circle k"), "give it a name: k = circle ABC"),
     Lesson("given", ("line AB", "line l"), "give it a name: l = line AB; AB alone needs no line of its own"),
@@ -131,9 +169,20 @@ LESSONS = (
         tuple(f"{word} of ABC" for word in "midpoint foot reflection centroid circumcentre".split()),
         _FIRST_THE_NAME,
     ),
-    Lesson("given", tuple(f"{word} of ABC" for word in "orthocentre incentre centre meet".split()), _FIRST_THE_NAME),
-    Lesson("given", ("ABC triangle", "ABCD square"), "first what it is, then its points: triangle ABC"),
-    Lesson("given", ("square ABCD with side 2", "triangle ABC with"), "say more on a line of its own: |AB| = 2"),
+    Lesson(
+        "given",
+        tuple(f"{word} of ABC" for word in "orthocentre incentre centre meet".split()),
+        _FIRST_THE_NAME,
+    ),
+    Lesson(
+        "given",
+        ("ABC triangle", "ABCD square"),
+        _FIRST_THE_SHAPE,
+        r"[A-Z0-9']+ (triangle|square|rect|rh|par|tr)",
+    ),
+    Lesson(
+        "given", ("square ABCD with side 2", "triangle ABC with"), "say more on a line of its own: |AB| = 2"
+    ),
     Lesson("given", ("right triangle ABC",), "say where: right triangle ABC with right angle at C"),
     Lesson("given", ("isosceles triangle ABC",), "say where: isosceles triangle ABC with apex A"),
     Lesson("claim", ("if |AB| = 1", "if A"), _ASSUMPTION, behind="if|when|suppose|assume"),
@@ -141,11 +190,19 @@ LESSONS = (
     Lesson("given", ("AB || CD",), "write `AB parallel to CD`", r"\|\|"),
     Lesson("claim", ("||AB| - 1| = 1", "2||AB| - 1| = 1"), "an absolute value is written abs(...)"),
     Lesson("claim", ("|AB| = 1 if |AC| = 1", "|AB| if"), _ASSUMPTION, r"(if|when|where|provided|iff)\b"),
-    Lesson("claim", ("P on opposite sides of AB", "P on the same side of AB"), "name both points: P and C on ..."),
+    Lesson(
+        "claim", ("P on opposite sides of AB", "P on the same side of AB"), "name both points: P and C on ..."
+    ),
     Lesson("given", tuple(f"P on the {c}" for c in ("line AB", "segment AB", "ray AB", "circle ABC")), _THE),
     Lesson("claim", ("P on the line AB", "P on the circle ABC"), _THE),
-    Lesson("given", ("k = circle with centre O radius 2", "k = circle with centre O, radius 2"), "write `and` before the radius"),
-    Lesson("given", ("D = apex of equilateral triangle ABC",), "name the side it stands on: ... triangle on BC"),
+    Lesson(
+        "given",
+        ("k = circle with centre O radius 2", "k = circle with centre O, radius 2"),
+        "write `and` before the radius",
+    ),
+    Lesson(
+        "given", ("D = apex of equilateral triangle ABC",), "name the side it stands on: ... triangle on BC"
+    ),
 )
 
 PLACES = (

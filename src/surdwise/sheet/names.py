@@ -53,7 +53,9 @@ def _brought_in(fact: Fact) -> list[Pt | Named]:
     items: list[Pt | Named] = []
     for index in FORMS[fact.form].new:
         arg = fact.args[index]
-        items.extend(part for part in (arg if isinstance(arg, tuple) else (arg,)) if isinstance(part, Pt | Named))
+        items.extend(
+            part for part in (arg if isinstance(arg, tuple) else (arg,)) if isinstance(part, Pt | Named)
+        )
     return items
 
 
@@ -84,7 +86,9 @@ def _check_fresh(item: Pt | Named, known: Known) -> None:
     if isinstance(item, Pt):
         if item.name in known.points:
             hint = "take another name, or say where it also is, such as `X on line AB` or `|XA| = |XB|`"
-            message = f"expected a new point, but {item.name} is already made in line {known.points[item.name]}"
+            message = (
+                f"expected a new point, but {item.name} is already made in line {known.points[item.name]}"
+            )
             raise Problem(item.span, message, hint)
     elif item.name in known.curves:
         kind, line = known.curves[item.name]
@@ -122,13 +126,17 @@ def _check_point(point: Pt, known: Known, later: Mapping[str, int]) -> None:
     message = f"expected a point of the figure, got {point.name}"
     if point.name in later:
         raise Problem(
-            point.span, message, f"{point.name} is made in line {later[point.name]}: move that line up before this one"
+            point.span,
+            message,
+            f"{point.name} is made in line {later[point.name]}: move that line up before this one",
         )
     alike = [name for name in known.points if name[0] == point.name[0]]
     if alike:
         raise Problem(point.span, message, f"did you mean {alike[0]}?")
     if not known.points:
-        raise Problem(point.span, message, f"first say what {point.name} is, such as `given point {point.name}`")
+        raise Problem(
+            point.span, message, f"first say what {point.name} is, such as `given point {point.name}`"
+        )
     names = list(known.points)
     shown = ", ".join(names[:12]) + (", ..." if len(names) > 12 else "")
     raise Problem(point.span, message, f"the points so far: {shown}")
@@ -141,12 +149,18 @@ def _check_curve(curve: Named, role: str, known: Known, later: Mapping[str, int]
         kind, line = known.curves[curve.name]
         if role in ("line", "circle") and kind != role:
             fitting = [name for name, (other, _) in known.curves.items() if other == role]
-            hint = f"did you mean {fitting[-1]}?" if fitting else f"name a {role} first, such as {_example(role)}"
+            hint = (
+                f"did you mean {fitting[-1]}?"
+                if fitting
+                else f"name a {role} first, such as {_example(role)}"
+            )
             raise Problem(curve.span, f"{message}, which is a {kind} (line {line})", hint)
         return
     if curve.name in later:
         raise Problem(
-            curve.span, message, f"{curve.name} is made in line {later[curve.name]}: move that line up before this one"
+            curve.span,
+            message,
+            f"{curve.name} is made in line {later[curve.name]}: move that line up before this one",
         )
     if len(curve.name) in (2, 3) and set(curve.name.upper()) <= known.points.keys():
         raise Problem(curve.span, message, f"points are capitals: did you mean {curve.name.upper()}?")

@@ -147,7 +147,9 @@ def _read_statement(draft: _Draft, table: Table, source: str, start: int, stop: 
     text = source[begin:stop]
     if keyword in ("title", "source"):
         if not text:
-            raise Problem(Span(number, stop + 1, stop + 2), f"expected a text behind `{keyword}`, got nothing")
+            raise Problem(
+                Span(number, stop + 1, stop + 2), f"expected a text behind `{keyword}`, got nothing"
+            )
         if keyword in draft.texts:
             message = f"expected one `{keyword}` a sheet, got a second"
             hint = f"the first is in line {draft.texts[keyword][1]}; sheets are separated by a line ---"

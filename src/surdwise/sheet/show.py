@@ -160,4 +160,6 @@ def _at_least(node: Node, tightness: int) -> str:
 
 def _starts_with_number(node: Node) -> bool:
     """Whether the printed factor would start with a digit, so that a sign is needed before it."""
-    return isinstance(node, Number) or (isinstance(node, Binary) and node.op == "^" and isinstance(node.left, Number))
+    return isinstance(node, Number) or (
+        isinstance(node, Binary) and node.op == "^" and isinstance(node.left, Number)
+    )

@@ -53,7 +53,8 @@ def table_from_data(data: dict[str, Any]) -> Table:
         fraction=data["fraction"],
         words=frozenset(data["words"]),
         rules=tuple(
-            Rule(origin, alias, tuple(mark == "1" for mark in kept)) for origin, alias, kept, _ in data["rules"]
+            Rule(origin, alias, tuple(mark == "1" for mark in kept))
+            for origin, alias, kept, _ in data["rules"]
         ),
         actions=tuple(row[0] for row in data["states"]),
         gotos=tuple(row[1] for row in data["states"]),

@@ -22,7 +22,8 @@ QUANTITY_STARTS = FUNCTIONS | {"|", "(", "-", "NUMBER", "FRACTION"}
 OPERATORS = frozenset("+-*/^")
 # Spellings and small words that are understood but not offered.
 UNOFFERED = frozenset(
-    "center circumcenter orthocenter incenter excenter trapezoid perp. toward intersection point the lies".split()
+    "center circumcenter orthocenter incenter excenter trapezoid perp. toward intersection".split()
+    + ["point", "the", "lies"]
 )
 MOST_SHOWN = 6
 LONGEST_SHOWN = 40

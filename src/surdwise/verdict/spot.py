@@ -9,14 +9,18 @@ from __future__ import annotations
 
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
+from fractions import Fraction
+from typing import Any
 
 from ..field import cells, ring, roots
+from ..field.ball import ball_of, number, polynomial
 from ..field.real import Branch, Unsettled
 from ..field.ring import Poly
 from ..field.tower import Element
+from ..figure.base import Base, plug
 from ..figure.component import Component
 from ..figure.conditions import Judge
-from ..figure.plane import Vec, square
+from ..figure.plane import Curve, Round, Straight, Vec, square
 
 CELL = frozenset({"figure", "fold", "open", "closed"})
 
@@ -74,11 +78,20 @@ class Spot(Judge):
         if name in self.register.done:
             return
         self.register.done.add(name)
-        whole = Element(self.comp.tower, e.num, e.den)
-        found = {**roots.norm_factors(whole), **roots.denominator_factors(whole)}
-        found = {n: p for n, p in found.items() if not cells.never_zero(p, self.comp.positive)}
+        found = self._factors(e)
         self.register.enter(kind, found)
         self.register.enter(f"{self.origin}:{kind}", found)
+
+    def _factors(self, e: Element) -> dict[str, Poly]:
+        """Irreducible factors of the norm and the denominator that can vanish."""
+        name = e.key()
+        if name not in self.comp.factors:
+            whole = Element(self.comp.tower, e.num, e.den)
+            found = {**roots.norm_factors(whole), **roots.denominator_factors(whole)}
+            self.comp.factors[name] = {
+                n: p for n, p in found.items() if not cells.never_zero(p, self.comp.positive)
+            }
+        return self.comp.factors[name]
 
     def _sign(self, e: Element, kind: str) -> int:
         if e.is_zero():
@@ -139,16 +152,23 @@ class Spot(Judge):
         """a/b; Undefined where b vanishes identically."""
         if b.is_zero():
             raise Undefined(words)
-        if not b.is_rational():
-            self._enter("thin", b)
-            self.register.enter("divisor", roots.norm_factors(Element(self.comp.tower, b.num, b.den)))
-        return a / b
+        if b.is_rational():
+            return a / b
+        self._enter("thin", b)
+        name = "1/" + b.key()
+        if name not in self.comp.memo:
+            self.comp.memo[name] = Element(self.comp.tower, b.num, b.den).inverse()
+        return a * self.comp.memo[name]
 
     def differ(self, a: Vec, b: Vec, words: str) -> None:
         """Undefined where two points coincide."""
         d = square(a - b)
         if d.is_zero():
             raise Undefined(words)
+
+    def polynomial(self, p: Poly) -> Element:
+        """A polynomial of the frame's parameters."""
+        return plug(p, Base(self.comp.tower, self.comp.values))
 
     def admitted(self, conditions: Sequence[Callable[[Judge], bool]]) -> bool:
         """Whether the component's requirements and the sheet's conditions hold here."""
@@ -168,22 +188,67 @@ class Spot(Judge):
             self.origin = "thesis"
 
 
-class Hint(Spot):
-    """A spot that guesses: signs by one ball, nothing entered.  For proposals that are proved
-    afterwards, never for a verdict."""
+class Hint(Judge):
+    """A judge that guesses: the whole figure in balls, tiny balls about zero taken for zero.
+    For proposals that are proved afterwards, never for a verdict."""
 
     def __init__(self, comp: Component, branch: Branch) -> None:
-        super().__init__(comp, branch, Register())
+        def vec(v: Vec) -> Vec:
+            return Vec(ball_of(v.x, branch), ball_of(v.y, branch))  # type: ignore[arg-type]
 
-    def _enter(self, kind: str, e: Element) -> None:
-        return
+        points = {n: vec(v) for n, v in comp.points.items()}
+        curves: dict[str, Curve] = {}
+        for n, c in comp.curves.items():
+            if isinstance(c, Straight):
+                curves[n] = Straight(vec(c.point), vec(c.direction))
+            else:
+                curves[n] = Round(vec(c.centre), ball_of(c.radius2, branch), vec(c.start))  # type: ignore[arg-type]
+        self.comp = Component(comp.tower, {}, (), points, curves)
+        self.parameters = {k: number(_fraction(v)) for k, v in branch.values.items()}
+        self.parameters.update({k: ball_of(e, branch) for k, e in comp.values.items()})
 
-    def _sign(self, e: Element, kind: str) -> int:
-        if e.is_zero():
-            return 0
-        s = self.branch.hint(Element(self.comp.tower, e.num, e.den))
+    def number(self, value: int | Fraction) -> Any:
+        """A rational constant."""
+        return number(value)
+
+    def sign(self, e: Any) -> int:
+        """Sign by one ball."""
+        s: int | None = e.sign()
         if s is None:
             raise Unsettled("too near zero to guess")
         return s
 
+    weak_sign = sign
 
+    def zero(self, e: Any) -> bool:
+        """Whether the ball is taken for zero."""
+        return self.sign(e) == 0
+
+    def absolute(self, e: Any) -> Any:
+        """|e|."""
+        return e * self.sign(e)
+
+    def root(self, q: Any) -> Any:
+        """Square root; Undefined for a negative number."""
+        if self.sign(q) < 0:
+            raise Undefined("a square root of a negative quantity")
+        return q.root()
+
+    def divide(self, a: Any, b: Any, words: str) -> Any:
+        """a/b."""
+        if self.sign(b) == 0:
+            raise Undefined(words)
+        return a / b
+
+    def differ(self, a: Vec, b: Vec, words: str) -> None:
+        """Undefined where two points coincide."""
+        if self.sign(square(a - b)) == 0:
+            raise Undefined(words)
+
+    def polynomial(self, p: Poly) -> Any:
+        """A polynomial of the frame's parameters."""
+        return polynomial(p, self.parameters)
+
+
+def _fraction(v: Any) -> Fraction:
+    return Fraction(int(v.p), int(v.q))

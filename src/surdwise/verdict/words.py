@@ -12,6 +12,7 @@ from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from itertools import combinations
 
+from ..field.ball import precise
 from ..field.real import Unsettled
 from ..figure.conditions import truth
 from ..sheet.show import show
@@ -42,8 +43,9 @@ class Lexicon:
     def row(self, p: Place) -> tuple[bool | None, ...]:
         """Truth of every candidate at a place; None where undefined or too near to guess."""
         if id(p) not in self._rows:
-            hint = Hint(p.comp, p.branch)
-            self._rows[id(p)] = p, tuple(_guess(c.condition, hint) for c in self.cands)
+            with precise():
+                hint = Hint(p.comp, p.branch)
+                self._rows[id(p)] = p, tuple(_guess(c.condition, hint) for c in self.cands)
         return self._rows[id(p)][1]
 
     def literals(self, places: Sequence[Place], but: Condition) -> list[Literal]:
