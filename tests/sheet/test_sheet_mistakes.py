@@ -267,9 +267,9 @@ FILES = (
     ("given triangle ABC\rclaim |AB| = |AD|\r", 2, 16, ("got D",)),
     ("\ufeffgiven triangle AB\n", 1, 16, ("expected three points",)),
     ("given triangle ABC\nclaim " + "(" * 201 + "1", 2, 207, ("at most 200 nested parentheses",)),
-    ("given triangle ABC\nclaim " + "not " * 300 + "1 = 1", 2, 1203, ("at most 200 levels",)),
+    ("given triangle ABC\nclaim " + "not " * 300 + "1 = 1", 2, 411, ("at most 200 levels",)),
     ("given triangle ABC\nclaim 1 = 1" + " + 1" * 300, 2, 11, ("at most 200 levels",)),
-    ("given triangle ABC\nclaim " + "-" * 5000 + "|AB| = 1", 2, 1604, ("at most 200 levels",)),
+    ("given triangle ABC\nclaim " + "-" * 5000 + "|AB| = 1", 2, 1607, ("at most 200 levels",)),
     ("given triangle ABC\nclaim 1 = " + "1" * 1001, 2, 11, ("at most 1000 digits, got 1001",)),
 )
 

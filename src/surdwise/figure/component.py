@@ -64,6 +64,7 @@ class Component:
     positive: frozenset[int] = frozenset()
     folded: frozenset[int] = frozenset()
     memo: dict[str, Element] = field(default_factory=dict)
+    kept: dict[object, Element] = field(default_factory=dict)
     factors: dict[str, dict[str, Poly]] = field(default_factory=dict)
 
     def copy(self) -> Component:

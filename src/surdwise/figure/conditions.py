@@ -12,7 +12,7 @@ from typing import Any
 
 from ..field.tower import Element
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Pt, Relation
-from .plane import Straight, Vec, cross, dot, orientation, square
+from .plane import Vec, cross, dot, square
 from .quantities import difference
 from .reader import Reader
 
@@ -41,10 +41,7 @@ class Judge(Reader):
 
 
 def _collinear(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
-    vs = [r.at(p) for p in pts]
-    if len(vs) == 3:
-        return [orientation(*vs)]
-    return [orientation(a, b, c) for a, b, c in combinations(vs, 3)]
+    return [r.turn(a, b, c) for a, b, c in combinations(pts, 3)]
 
 
 def _concyclic(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
@@ -56,11 +53,11 @@ def _concyclic(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
 
 
 def _parallel(r: Reader, a: Any, b: Any) -> list[Element]:
-    return [cross(r.line(a).direction, r.line(b).direction)]
+    return [r.kept(("cross", a, b), lambda: cross(r.line(a).direction, r.line(b).direction))]
 
 
 def _perpendicular(r: Reader, a: Any, b: Any) -> list[Element]:
-    return [dot(r.line(a).direction, r.line(b).direction)]
+    return [r.kept(("dot", a, b), lambda: dot(r.line(a).direction, r.line(b).direction))]
 
 
 EQUATIONS: dict[str, Callable[..., list[Element]]] = {
@@ -68,13 +65,9 @@ EQUATIONS: dict[str, Callable[..., list[Element]]] = {
     "concyclic": _concyclic,
     "parallel_lines": _parallel,
     "perpendicular_lines": _perpendicular,
-    "on_line": lambda r, p, line: _incident(r, r.at(p), r.line(line)),
+    "on_line": lambda r, p, line: [r.offset(p, line)],
     "on_circle": lambda r, p, k: _on_circle(r, r.at(p), r.circle(k)),
 }
-
-
-def _incident(r: Reader, p: Vec, line: Straight) -> list[Element]:
-    return [cross(line.direction, p - line.point)]
 
 
 def _on_circle(r: Reader, p: Vec, k: Any) -> list[Element]:
@@ -152,15 +145,13 @@ def is_closed(c: Condition) -> bool:
 
 
 def _between(j: Judge, c: Pt, a: Pt, b: Pt) -> bool:
-    p, q, m = j.at(a), j.at(b), j.at(c)
-    return j.zero(orientation(p, q, m)) and j.sign(dot(p - m, q - m)) < 0
+    return j.zero(j.turn(a, b, c)) and j.sign(j.lean(c, a, b)) < 0
 
 
 def _orients(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> tuple[int, list[int]]:
-    a, b, c = (j.at(x) for x in tri)
-    v = j.at(p)
-    whole = j.sign(orientation(a, b, c))
-    return whole, [j.sign(orientation(x, y, v)) * whole for x, y in ((a, b), (b, c), (c, a))]
+    a, b, c = tri
+    whole = j.sign(j.turn(a, b, c))
+    return whole, [j.sign(j.turn(x, y, p)) * whole for x, y in ((a, b), (b, c), (c, a))]
 
 
 def _inside(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> bool:
@@ -174,16 +165,18 @@ def _outside(j: Judge, p: Pt, tri: tuple[Pt, ...]) -> bool:
 
 
 def _side_product(j: Judge, p: Pt, q: Pt, line: Any) -> int:
-    s = j.line(line)
-    a = j.sign(cross(s.direction, j.at(p) - s.point))
-    return a and a * j.sign(cross(s.direction, j.at(q) - s.point))
+    a = j.sign(j.offset(p, line))
+    return a and a * j.sign(j.offset(q, line))
+
+
+def _apart(j: Judge, a: Pt, b: Pt) -> None:
+    j.differ(j.at(a), j.at(b), f"{a} = {b}")
 
 
 def _angle(j: Judge, b: Pt, a: Pt, c: Pt) -> str:
-    u, v = j.at(b) - j.at(a), j.at(c) - j.at(a)
-    j.differ(j.at(a), j.at(b), f"{a} = {b}")
-    j.differ(j.at(a), j.at(c), f"{a} = {c}")
-    return {1: "acute", 0: "right", -1: "obtuse"}[j.sign(dot(u, v))]
+    _apart(j, a, b)
+    _apart(j, a, c)
+    return {1: "acute", 0: "right", -1: "obtuse"}[j.sign(j.lean(a, b, c))]
 
 
 def _triangle_size(j: Judge, tri: tuple[Pt, ...], size: str) -> bool:
@@ -195,34 +188,34 @@ def _triangle_size(j: Judge, tri: tuple[Pt, ...], size: str) -> bool:
 
 
 def _convex(j: Judge, quad: tuple[Pt, ...]) -> bool:
-    vs = [j.at(p) for p in quad]
-    n = len(vs)
-    signs = {j.sign(orientation(vs[i], vs[(i + 1) % n], vs[(i + 2) % n])) for i in range(n)}
+    n = len(quad)
+    signs = {j.sign(j.turn(quad[i], quad[(i + 1) % n], quad[(i + 2) % n])) for i in range(n)}
     return len(signs) == 1 and 0 not in signs
 
 
 def _distinct(j: Judge, pts: tuple[Pt, ...]) -> bool:
-    return not any(j.zero(square(j.at(a) - j.at(b))) for a, b in combinations(pts, 2))
+    return not any(j.zero(j.gap2(a, b)) for a, b in combinations(pts, 2))
 
 
 def _on_segment(j: Judge, p: Pt, pair: tuple[Pt, ...]) -> bool:
-    a, b, v = j.at(pair[0]), j.at(pair[1]), j.at(p)
-    return j.zero(orientation(a, b, v)) and j.weak_sign(dot(a - v, b - v)) <= 0
+    a, b = pair
+    return j.zero(j.turn(a, b, p)) and j.weak_sign(j.lean(p, a, b)) <= 0
 
 
 def _on_ray(j: Judge, p: Pt, pair: tuple[Pt, ...]) -> bool:
-    a, b, v = j.at(pair[0]), j.at(pair[1]), j.at(p)
-    return j.zero(orientation(a, b, v)) and j.weak_sign(dot(v - a, b - a)) >= 0
+    a, b = pair
+    _apart(j, a, b)
+    return j.zero(j.turn(a, b, p)) and j.weak_sign(j.lean(a, p, b)) >= 0
 
 
 def _is_equilateral(j: Judge, tri: tuple[Pt, ...]) -> bool:
-    a, b, c = (j.at(x) for x in tri)
-    return j.zero(square(a - b) - square(b - c)) and j.zero(square(b - c) - square(c - a))
+    a, b, c = tri
+    return j.zero(j.gap2(a, b) - j.gap2(b, c)) and j.zero(j.gap2(b, c) - j.gap2(c, a))
 
 
 def _is_isosceles(j: Judge, tri: tuple[Pt, ...], apex: Pt) -> bool:
-    b, c = (j.at(x) for x in tri if x.name != apex.name)
-    return j.zero(square(j.at(apex) - b) - square(j.at(apex) - c))
+    b, c = (x for x in tri if x.name != apex.name)
+    return j.zero(j.gap2(apex, b) - j.gap2(apex, c))
 
 
 def _frame_sign(j: Judge, p: Any, op: str) -> bool:

@@ -11,8 +11,7 @@ from collections.abc import Callable
 from fractions import Fraction
 
 from ..field.tower import Element
-from ..sheet.tree import Measure, Number, Pt, Quantity, Unary
-from .plane import Vec, cross, dot, orientation, square
+from ..sheet.tree import Measure, Number, PointRef, Quantity, Unary
 from .reader import Reader
 
 
@@ -116,61 +115,51 @@ def is_plain(q: Quantity) -> bool:
 # ---------------------------------------------------------------- one function a kind
 
 
-def _pts(q: Measure) -> list[Pt]:
-    return [p for p in q.points if isinstance(p, Pt)]
-
-
 def _length2(r: Reader, q: Measure) -> Element:
-    a, b = (r.at(p) for p in q.points)
-    return square(b - a)
-
-
-def _dist_parts(r: Reader, q: Measure) -> tuple[Element, Element]:
-    assert q.line is not None
-    line = r.line(q.line)
-    return cross(line.direction, r.at(q.points[0]) - line.point), square(line.direction)
+    return r.gap2(q.points[0], q.points[1])
 
 
 def _dist(r: Reader, q: Measure) -> Element:
-    c, d = _dist_parts(r, q)
-    return r.divide(r.absolute(c), r.root(d), "the line is not defined")
+    assert q.line is not None
+    c = r.offset(q.points[0], q.line)
+    return r.divide(r.absolute(c), r.root(r.stretch(q.line)), "the line is not defined")
 
 
 def _dist2(r: Reader, q: Measure) -> Element:
-    c, d = _dist_parts(r, q)
-    return r.divide(c * c, d, "the line is not defined")
+    assert q.line is not None
+    c = r.offset(q.points[0], q.line)
+    return r.divide(c * c, r.stretch(q.line), "the line is not defined")
 
 
 def _twice_area(r: Reader, q: Measure) -> Element:
-    vs = [r.at(p) for p in q.points]
+    """Twice the signed area, by a fan of triangles from the first vertex."""
+    first, *rest = q.points
     total = r.number(0)
-    for a, b in zip(vs, vs[1:] + vs[:1], strict=True):
-        total = total + cross(a, b)
+    for a, b in zip(rest, rest[1:], strict=False):
+        total = total + r.turn(first, a, b)
     return total
 
 
 def _perimeter(r: Reader, q: Measure) -> Element:
-    vs = [r.at(p) for p in q.points]
     total = r.number(0)
-    for a, b in zip(vs, vs[1:] + vs[:1], strict=True):
-        total = total + r.distance(a, b)
+    for a, b in zip(q.points, q.points[1:] + q.points[:1], strict=True):
+        total = total + r.span(a, b)
     return total
 
 
-def _triangle(r: Reader, q: Measure) -> tuple[Vec, Vec, Vec]:
-    a, b, c = (r.at(p) for p in q.points[:3])
-    return a, b, c
+def _whole(r: Reader, q: Measure) -> Element:
+    return r.turn(*q.points[:3])
 
 
 def _circumradius(r: Reader, q: Measure) -> Element:
-    a, b, c = r.sides(*_pts(q)[:3])
-    return r.divide(a * b * c, r.absolute(orientation(*_triangle(r, q))) * 2, _flat(q))
+    a, b, c = r.sides(*q.points[:3])
+    return r.divide(a * b * c, r.absolute(_whole(r, q)) * 2, _flat(q))
 
 
 def _circumradius2(r: Reader, q: Measure) -> Element:
-    p, s, t = _triangle(r, q)
-    d = orientation(p, s, t)
-    return r.divide(square(s - p) * square(t - s) * square(p - t), d * d * 4, _flat(q))
+    a, b, c = q.points[:3]
+    d = r.turn(a, b, c)
+    return r.divide(r.gap2(a, b) * r.gap2(b, c) * r.gap2(c, a), d * d * 4, _flat(q))
 
 
 def _flat(q: Measure) -> str:
@@ -178,66 +167,62 @@ def _flat(q: Measure) -> str:
 
 
 def _inradius(r: Reader, q: Measure) -> Element:
-    a, b, c = r.sides(*_pts(q)[:3])
-    return r.divide(r.absolute(orientation(*_triangle(r, q))), a + b + c, _flat(q))
+    a, b, c = r.sides(*q.points[:3])
+    return r.divide(r.absolute(_whole(r, q)), a + b + c, _flat(q))
 
 
 def _exradius(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(r, q)
-    d = r.absolute(orientation(a, b, c))
-    opp, s, t = r.distance(b, c), r.distance(c, a), r.distance(a, b)
-    return r.divide(d, s + t - opp, _flat(q))
+    a, b, c = _turned(q)
+    opp, s, t = r.sides(a, b, c)
+    return r.divide(r.absolute(_whole(r, q)), s + t - opp, _flat(q))
 
 
-def _turned(r: Reader, q: Measure) -> tuple[Vec, Vec, Vec]:
+def _turned(q: Measure) -> tuple[PointRef, PointRef, PointRef]:
     """The triangle's vertices with the named one first."""
-    names = [p.name for p in _pts(q)[:3]]
-    i = names.index(_pts(q)[3].name)
-    vs = list(_triangle(r, q))
-    return vs[i], vs[(i + 1) % 3], vs[(i + 2) % 3]
+    i = q.points[:3].index(q.points[3])
+    return q.points[i], q.points[(i + 1) % 3], q.points[(i + 2) % 3]
 
 
 def _median2(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(r, q)
-    return square((b + c) / 2 - a)
+    """Apollonius: 4 m^2 = 2 b^2 + 2 c^2 - a^2."""
+    a, b, c = _turned(q)
+    return (r.gap2(a, b) * 2 + r.gap2(a, c) * 2 - r.gap2(b, c)) * Fraction(1, 4)
 
 
 def _altitude(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(r, q)
-    return r.divide(r.absolute(orientation(a, b, c)), r.distance(b, c), "the side is not defined")
+    a, b, c = _turned(q)
+    return r.divide(r.absolute(_whole(r, q)), r.span(b, c), "the side is not defined")
 
 
 def _altitude2(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(r, q)
-    d = orientation(a, b, c)
-    return r.divide(d * d, square(c - b), "the side is not defined")
+    a, b, c = _turned(q)
+    d = _whole(r, q)
+    return r.divide(d * d, r.gap2(b, c), "the side is not defined")
 
 
 def _bisector(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(r, q)
-    y, z = r.distance(c, a), r.distance(a, b)
+    a, b, c = _turned(q)
+    y, z = r.span(c, a), r.span(a, b)
     s = y + z
     # length^2 = yz (1 - (x/(y+z))^2), and (y+z)^2 - x^2 = 2 (yz + the scalar product at a)
-    inner = y * z * 2 * (y * z + dot(b - a, c - a))
+    inner = y * z * 2 * (y * z + r.lean(a, b, c))
     return r.divide(r.root(inner), s, "the angle is not defined")
 
 
 def _cos(r: Reader, q: Measure) -> Element:
-    b, a, c = _triangle(r, q)
-    n = r.distance(a, b) * r.distance(a, c)
-    return r.divide(dot(b - a, c - a), n, "the angle is not defined")
+    b, a, c = q.points
+    return r.divide(r.lean(a, b, c), r.span(a, b) * r.span(a, c), "the angle is not defined")
 
 
 def _sin(r: Reader, q: Measure) -> Element:
-    b, a, c = _triangle(r, q)
-    n = r.distance(a, b) * r.distance(a, c)
-    return r.divide(r.absolute(orientation(a, b, c)), n, "the angle is not defined")
+    b, a, c = q.points
+    return r.divide(r.absolute(_whole(r, q)), r.span(a, b) * r.span(a, c), "the angle is not defined")
 
 
 def _sin2(r: Reader, q: Measure) -> Element:
-    b, a, c = _triangle(r, q)
-    d = orientation(a, b, c)
-    return r.divide(d * d, square(b - a) * square(c - a), "the angle is not defined")
+    b, a, c = q.points
+    d = _whole(r, q)
+    return r.divide(d * d, r.gap2(a, b) * r.gap2(a, c), "the angle is not defined")
 
 
 def _area2(r: Reader, q: Measure) -> Element:

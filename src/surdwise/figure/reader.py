@@ -8,13 +8,14 @@ a figure forks, a sample looks it up, the formal reader keeps lengths as symbols
 from __future__ import annotations
 
 from abc import ABC, abstractmethod
+from collections.abc import Callable
 from fractions import Fraction
 from typing import TYPE_CHECKING
 
 from ..field.tower import Element
 from ..sheet.tree import CentreOf, Named, PointRef, Pt, Through
 from ..sheet.tree import Curve as CurveRef
-from .plane import Round, Straight, Vec, cross, dot, square
+from .plane import Round, Straight, Vec, cross, dot, orientation, square
 
 if TYPE_CHECKING:
     from .component import Component
@@ -40,6 +41,37 @@ class Reader(ABC):
     @abstractmethod
     def differ(self, a: Vec, b: Vec, words: str) -> None:
         """Demand that two points differ."""
+
+    def kept(self, name: object, make: Callable[[], Element]) -> Element:
+        """An element that depends on no sign; readers of a finished component keep it."""
+        return make()
+
+    def turn(self, a: PointRef, b: PointRef, c: PointRef) -> Element:
+        """Twice the signed area of a triangle of placed points."""
+        return self.kept(("turn", a, b, c), lambda: orientation(self.at(a), self.at(b), self.at(c)))
+
+    def gap2(self, a: PointRef, b: PointRef) -> Element:
+        """Squared distance of two placed points."""
+        return self.kept(("gap", a, b), lambda: square(self.at(b) - self.at(a)))
+
+    def lean(self, a: PointRef, b: PointRef, c: PointRef) -> Element:
+        """Scalar product of the vectors from a to b and c."""
+        return self.kept(
+            ("lean", a, b, c), lambda: dot(self.at(b) - self.at(a), self.at(c) - self.at(a))
+        )
+
+    def offset(self, p: PointRef, ref: CurveRef) -> Element:
+        """Signed area of a line's direction and the way from the line to p."""
+
+        def make() -> Element:
+            line = self.line(ref)
+            return cross(line.direction, self.at(p) - line.point)
+
+        return self.kept(("offset", p, ref), make)
+
+    def stretch(self, ref: CurveRef) -> Element:
+        """Squared length of a line's direction."""
+        return self.kept(("stretch", ref), lambda: square(self.line(ref).direction))
 
     def number(self, value: int | Fraction) -> Element:
         """A rational constant."""
@@ -95,7 +127,10 @@ class Reader(ABC):
         t = self.divide(dot(p - line.point, d), square(d), words)
         return line.point + d * t
 
-    def sides(self, a: Pt, b: Pt, c: Pt) -> tuple[Element, Element, Element]:
+    def span(self, a: PointRef, b: PointRef) -> Element:
+        """Distance of two placed points."""
+        return self.root(self.gap2(a, b))
+
+    def sides(self, a: PointRef, b: PointRef, c: PointRef) -> tuple[Element, Element, Element]:
         """Side lengths opposite a, b, c."""
-        p, q, r = self.at(a), self.at(b), self.at(c)
-        return self.distance(q, r), self.distance(r, p), self.distance(p, q)
+        return self.span(b, c), self.span(c, a), self.span(a, b)

@@ -46,7 +46,7 @@ def explain(table: Table, statement: Statement, failure: Unexpected) -> Problem:
     Tried in this order: advice from a lesson; the statement belongs under another keyword, or
     gets further under that; a word misspelled one step earlier; what was expected here.
     """
-    if _advice(table, failure, statement.source):
+    if _advice(table, statement, failure):
         return _explain_here(table, statement, failure)
     other = "provided" if statement.keyword == "given" else "given"
     try:
@@ -112,7 +112,7 @@ def _explain_here(table: Table, statement: Statement, failure: Unexpected) -> Pr
     reserved = _reserved_name(table, statement, failure)
     if reserved is not None:
         return reserved
-    advice = _advice(table, failure, statement.source)
+    advice = _advice(table, statement, failure)
     if not advice:
         earlier = _misspelled_before(table, failure, statement.line)
         if earlier is not None:
@@ -132,13 +132,13 @@ def _wanted(table: Table, states: tuple[int, ...], kinds: frozenset[str]) -> str
     return expected(kinds)
 
 
-def _advice(table: Table, failure: Unexpected, source: str) -> str:
+def _advice(table: Table, statement: Statement, failure: Unexpected) -> str:
     """The advice of the first lesson that goes wrong at the same place on the same word, or ""."""
     token = failure.token
     before = failure.before.text if failure.before else ""
     last, state = failure.states[-1], resting(table, failure.states)[-1]
     for lesson in LESSONS:
-        if lesson.look and not re.compile(lesson.look).match(source, token.column - 1):
+        if lesson.look and not re.compile(lesson.look).match(statement.source, token.column - 1, statement.stop):
             continue
         if lesson.behind and not re.fullmatch(lesson.behind, before):
             continue

@@ -57,6 +57,7 @@ _NOT_FIRST = "`not` stands before the whole condition: not P on line AB"
 _ONE_POINT = "one point a line: P on circle k"
 _FIRST_THE_NAME = "first the name, then what it is: X = midpoint of AB"
 _FIRST_THE_SHAPE = "first what it is, then its points: triangle ABC"
+_BOTH = "name both points: P and C on opposite sides of AB"
 _THE = "leave out `the`"
 _ASSUMPTION = "write the assumption behind `provided`"
 
@@ -105,9 +106,8 @@ LESSONS = (
     ),
     Lesson("given", ("M is midpoint of AB",), "write M = midpoint of AB", r"(is|be|as)\b"),
     Lesson("given", ("let M = midpoint of AB",), "start with what the line says: M = midpoint of AB"),
-    Lesson("given", ("P on arc AB",), _ARC, r"arc\b"),
-    Lesson("given", ("P on arc ABC", "P on arc A"), "for an arc write circle: P on circle ABC"),
-    Lesson("claim", ("P on arc AB", "P on arc ABC"), _ARC),
+    Lesson("given", ("P on arc AB", "P on arc ABC", "P on arc A"), _ARC, behind="arc"),
+    Lesson("claim", ("P on arc AB", "P on arc ABC", "P on arc A"), _ARC, behind="arc"),
     Lesson(
         "given", tuple(f"P on {word} of ABC" for word in ("incircle", "excircle", "circumcircle")), _NAME_IT
     ),
@@ -144,6 +144,7 @@ LESSONS = (
     ),
     Lesson("claim", ("P = Q",), _COINCIDE, r"=\s*[A-Z][0-9']*\s*(and\b|or\b|$)"),
     Lesson("given", ("P = Q",), _COINCIDE),
+    Lesson("claim", ("|AB| = 1 if |AC| = 1", "|AB| if"), _ASSUMPTION, r"(if|when|where|provided|iff)\b"),
     Lesson("claim", ("|AB| = tan(1)", "2tan(1) = 1", "|AB| + tan(1) = 1"), _FUNCTIONS, r"[a-z]+\("),
     Lesson("claim", ("tan(1) = 1",), _FUNCTIONS),
     Lesson("claim", ("|AB| = x", "2x = 1", "|AB| + x = 1", "|AB|*x = 1", "|AB|/x = 1"), _UNKNOWN_NUMBER),
@@ -189,12 +190,10 @@ LESSONS = (
     Lesson("claim", ("AB || CD",), "write `AB parallel to CD`", r"\|\|"),
     Lesson("given", ("AB || CD",), "write `AB parallel to CD`", r"\|\|"),
     Lesson("claim", ("||AB| - 1| = 1", "2||AB| - 1| = 1"), "an absolute value is written abs(...)"),
-    Lesson("claim", ("|AB| = 1 if |AC| = 1", "|AB| if"), _ASSUMPTION, r"(if|when|where|provided|iff)\b"),
-    Lesson(
-        "claim", ("P on opposite sides of AB", "P on the same side of AB"), "name both points: P and C on ..."
-    ),
+    Lesson("claim", ("P on opposite sides of AB", "P on same side of AB"), _BOTH),
+    Lesson("claim", ("P on the same side of AB",), _BOTH, r"the (same|opposite)\b"),
     Lesson("given", tuple(f"P on the {c}" for c in ("line AB", "segment AB", "ray AB", "circle ABC")), _THE),
-    Lesson("claim", ("P on the line AB", "P on the circle ABC"), _THE),
+    Lesson("claim", ("P on the line AB", "P on the circle ABC"), _THE, r"the (line|segment|ray|circle)\b"),
     Lesson(
         "given",
         ("k = circle with centre O radius 2", "k = circle with centre O, radius 2"),

@@ -82,7 +82,7 @@ def parse(table: Table, start: str, source: str, position: int, stop: int, line:
 
 def _too_deep(span: Span) -> Problem:
     message = f"expected a formula of at most {DEEPEST} levels, got a deeper one"
-    return Problem(span, message, "write a shorter sum or product")
+    return Problem(span, message, "write it shorter")
 
 
 def acceptable(table: Table, states: tuple[int, ...]) -> frozenset[str]:

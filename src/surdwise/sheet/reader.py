@@ -131,7 +131,7 @@ def _trim(source: str, start: int) -> tuple[int, int]:
     """Where the text of a line begins and ends, spaces and comment left out."""
     comment = source.find("#", start)
     part = source[start : comment if comment >= 0 else len(source)]
-    begin = start + len(part) - len(part.lstrip())
+    begin = start + (len(part) - len(part.lstrip()) if part.strip() else 0)
     return begin, max(begin, start + len(part.rstrip()))
 
 

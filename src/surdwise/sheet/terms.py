@@ -23,7 +23,7 @@ OPERATORS = frozenset("+-*/^")
 # Spellings and small words that are understood but not offered.
 UNOFFERED = frozenset(
     "center circumcenter orthocenter incenter excenter trapezoid perp. toward intersection".split()
-    + ["point", "the", "lies"]
+    + ["point", "the", "lies", "lie"]
 )
 MOST_SHOWN = 6
 LONGEST_SHOWN = 40

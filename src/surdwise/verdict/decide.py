@@ -20,7 +20,7 @@ from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
 from .spot import Undefined
 from .survey import OutOfTime, Place, Statement, Survey, Surveyor
 from .variants import patterns, signed, terms
-from .words import Lexicon, name, said
+from .words import Lexicon, in_frame, name, said
 
 PROOF_ROUNDS = 6
 NAMING_PLACES = 120
@@ -80,23 +80,30 @@ class Case:
             self.lexicon = Lexicon([*candidates(self.sheet, comps, claim), *last])
         return self.lexicon
 
-    def named(self, whats: Sequence[Condition], found: Survey) -> list[Condition | None]:
+    def named(
+        self, whats: Sequence[Condition], found: Survey, loose: frozenset[int] = frozenset()
+    ) -> list[Name]:
         """For each statement (the i-th judged by the survey's i-th truth) a condition proved
-        equivalent to it on every admitted figure, or None.
+        equivalent to it on every admitted figure, or none.
 
         Guess from the places, prove by a survey of the agreement, learn from the places where
-        they differ.
+        they differ.  For the `loose` statements a name that is right up to a thin set will do
+        where no exact one is short.
         """
         lexicon = self.words(found, whats[0])
+        full = max(p.dimension for p in found.places)
         pools = [_varied([(p, bool(p.truths[i])) for p in found.places]) for i in range(len(whats))]
-        answers: list[Condition | None] = [None] * len(whats)
+        answers = [Name(None, True)] * len(whats)
+        rough: set[int] = set()
         open_ = set(range(len(whats)))
         for _ in range(PROOF_ROUNDS):
             guesses: dict[int, Condition] = {}
             for i in sorted(open_):
-                pts = [p for p, _ in pools[i]]
-                target = sum(1 << k for k, (_, t) in enumerate(pools[i]) if t)
-                guess = name(target, (1 << len(pts)) - 1, lexicon.literals(pts, whats[i]))
+                guess = None if i in rough else _guessed(lexicon, pools[i], whats[i], i not in loose)
+                if guess is None and i in loose:
+                    rough.add(i)
+                    pools[i] = [(p, t) for p, t in pools[i] if p.dimension == full]
+                    guess = _guessed(lexicon, pools[i], whats[i], True)
                 if guess is not None:
                     guesses[i] = guess
             open_ = set(guesses)
@@ -107,12 +114,35 @@ class Case:
             proof = self.survey([*pairs, *(statement(whats[i]) for i in keys)], closed=False)
             for k, i in enumerate(keys):
                 wrong = [p for p in proof.places if not p.truths[k]]
-                if wrong:
-                    pools[i] = [*pools[i], *((p, bool(p.truths[len(keys) + k])) for p in wrong[:30])]
+                bad = [p for p in wrong if p.dimension == full] if i in rough else wrong
+                if bad:
+                    pools[i] = [*pools[i], *((p, bool(p.truths[len(keys) + k])) for p in bad[:30])]
                 else:
-                    answers[i] = guesses[i]
+                    answers[i] = Name(guesses[i], not wrong)
                     open_.discard(i)
         return answers
+
+
+@dataclass(frozen=True)
+class Name:
+    """A proved condition (None: not found), and whether it is right on thin sets too."""
+
+    condition: Condition | None
+    exact: bool
+
+
+def _guessed(
+    lexicon: Lexicon, pool: Sequence[tuple[Place, bool]], what: Condition, with_frame: bool
+) -> Condition | None:
+    pts = [p for p, _ in pool]
+    target = sum(1 << k for k, (_, t) in enumerate(pool) if t)
+    whole = (1 << len(pts)) - 1
+    lits = lexicon.literals(pts, what)
+    plain = [x for x in lits if not in_frame(x.condition)]
+    guess = name(target, whole, plain)
+    if guess is None and with_frame:
+        guess = name(target, whole, lits)
+    return guess
 
 
 def _distinct(comps: Sequence[Component]) -> list[Component]:
@@ -244,8 +274,8 @@ def _explained(
         found = _only(first, keep)
         forms = [forms[i - len(whats)] for i in keep[len(whats) :]]
         whats = [*whats, *forms]
-    said_ = _where(case, whats, found)
     n = len(whats) - len(forms)
+    said_ = _where(case, whats, found, n)
     where, exact_ = [w for w, _ in said_], [e for _, e in said_]
     if out.verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
         out = replace(out, condition=where[0])
@@ -284,8 +314,11 @@ def _only(s: Survey, keep: Sequence[int]) -> Survey:
     return replace(s, places=places)
 
 
-def _where(case: Case, whats: Sequence[Condition], found: Survey) -> list[tuple[str | None, bool]]:
-    """Where each statement holds, in words, and whether the words are exact on thin sets too."""
+def _where(
+    case: Case, whats: Sequence[Condition], found: Survey, strict: int
+) -> list[tuple[str | None, bool]]:
+    """Where each statement holds, in words, and whether the words are exact on thin sets too;
+    the first `strict` statements get exact words or none."""
     out: list[tuple[str | None, bool]] = [(None, True)] * len(whats)
     todo = []
     for i in range(len(whats)):
@@ -297,9 +330,10 @@ def _where(case: Case, whats: Sequence[Condition], found: Survey) -> list[tuple[
         else:
             todo.append(i)
     if todo:
-        answers = case.named([whats[i] for i in todo], _only(found, todo))
-        for i, c in zip(todo, answers, strict=True):
-            out[i] = (None if c is None else said(c), True)
+        loose = frozenset(k for k, i in enumerate(todo) if i >= strict)
+        answers = case.named([whats[i] for i in todo], _only(found, todo), loose)
+        for i, a in zip(todo, answers, strict=True):
+            out[i] = (None if a.condition is None else said(a.condition), a.exact)
     return out
 
 

@@ -40,7 +40,7 @@ class Register:
 
     polys: dict[str, Poly] = field(default_factory=dict)
     kinds: dict[str, set[str]] = field(default_factory=dict)
-    done: set[str] = field(default_factory=set)
+    done: dict[tuple[str, str, int], Element] = field(default_factory=dict)
 
     def enter(self, kind: str, factors: dict[str, Poly]) -> None:
         """Add polynomials under a kind."""
@@ -70,14 +70,21 @@ class Spot(Judge):
         self.register = register
         self.origin = "thesis"
         self._roots: dict[str, Element] = {}
+        self._signs: dict[int, tuple[Element, int]] = {}
+
+    def kept(self, name: object, make: Callable[[], Element]) -> Element:
+        """An element that depends on no sign, computed once for the component."""
+        if name not in self.comp.kept:
+            self.comp.kept[name] = make()
+        return self.comp.kept[name]
 
     # ------------------------------------------------------------------ signs
 
     def _enter(self, kind: str, e: Element) -> None:
-        name = f"{kind}:{self.origin}:{e.key()}"
+        name = kind, self.origin, id(e)
         if name in self.register.done:
             return
-        self.register.done.add(name)
+        self.register.done[name] = e  # kept alive, so that its identity stays its own
         found = self._factors(e)
         self.register.enter(kind, found)
         self.register.enter(f"{self.origin}:{kind}", found)
@@ -99,7 +106,11 @@ class Spot(Judge):
         if e.is_rational():
             return 1 if e.as_rational() > 0 else -1
         self._enter(kind, e)
-        return self.branch.sign(Element(self.comp.tower, e.num, e.den))
+        known = self._signs.get(id(e))
+        if known is None:
+            known = e, self.branch.sign(Element(self.comp.tower, e.num, e.den))
+            self._signs[id(e)] = known
+        return known[1]
 
     def sign(self, e: Element) -> int:
         """Sign on the whole cell."""
@@ -204,8 +215,15 @@ class Hint(Judge):
             else:
                 curves[n] = Round(vec(c.centre), ball_of(c.radius2, branch), vec(c.start))  # type: ignore[arg-type]
         self.comp = Component(comp.tower, {}, (), points, curves)
+        self._kept: dict[object, Any] = {}
         self.parameters = {k: number(_fraction(v)) for k, v in branch.values.items()}
         self.parameters.update({k: ball_of(e, branch) for k, e in comp.values.items()})
+
+    def kept(self, name: object, make: Callable[[], Any]) -> Any:
+        """A number that depends on no sign, computed once."""
+        if name not in self._kept:
+            self._kept[name] = make()
+        return self._kept[name]
 
     def number(self, value: int | Fraction) -> Any:
         """A rational constant."""

@@ -1,0 +1,135 @@
+"""The table of forms covers the grammar, and every example reads as the form it stands for."""
+
+from __future__ import annotations
+
+import re
+
+import pytest
+
+from surdwise.sheet import FORMS, Comparison, Fact, Form, Kind, Measure, Relation, forms_of, read_line, show
+from surdwise.sheet.table import GRAMMAR_FILE, load_table
+
+FIGURE_KINDS = (Kind.FREE, Kind.SHAPE, Kind.POINT_ON, Kind.MADE, Kind.MEET, Kind.CURVE)
+
+
+def grammar_aliases() -> set[str]:
+    with open(GRAMMAR_FILE, encoding="utf-8") as file:
+        return set(re.findall(r"->\s*(\w+)", file.read()))
+
+
+def test_every_alias_of_the_grammar_has_a_form_and_no_other() -> None:
+    assert set(FORMS) == grammar_aliases()
+    assert {rule.alias for rule in load_table().rules} - {""} == set(FORMS)
+
+
+def test_the_groups_cover_the_table_in_order() -> None:
+    listed = [form for kind in Kind for form in forms_of(kind)]
+    assert len(listed) == len(FORMS)
+    assert set(listed) == set(FORMS.values())
+    assert all(forms_of(kind) for kind in Kind)
+
+
+@pytest.mark.parametrize("form", FORMS.values(), ids=lambda form: form.alias)
+def test_a_form_says_what_it_is(form: Form) -> None:
+    assert form.example and form.meaning and not form.meaning.endswith(".")
+    assert form.args == () or all(f"{{{i}}}" in form.pattern for i in range(len(form.args)))
+    assert (form.makes != "") == (form.kind is Kind.CURVE)
+    assert all(0 <= index < len(form.args) for index in form.new)
+    assert bool(form.new) == (form.kind in FIGURE_KINDS)
+    if form.corner is not None:
+        assert form.args[form.corner[0]] == "triple"
+
+
+STATED = [(form, keyword) for form in FORMS.values() for keyword in form.under]
+
+
+@pytest.mark.parametrize(("form", "keyword"), STATED, ids=[f"{form.alias} {keyword}" for form, keyword in STATED])
+def test_an_example_reads_as_its_form(form: Form, keyword: str) -> None:
+    body = read_line(keyword, form.example)
+    if isinstance(body, Fact | Relation):
+        assert body.form == form.alias
+        assert len(body.args) == len(form.args)
+        assert isinstance(body, Fact) == (keyword == "given" and form.kind in FIGURE_KINDS)
+    elif isinstance(body, Comparison):
+        assert form.alias in ("equation", "comparison")
+    assert show(body) == form.example or form.alias == "points"
+
+
+@pytest.mark.parametrize("form", forms_of(Kind.QUANTITY), ids=lambda form: form.alias)
+def test_an_example_of_a_quantity_reads_as_one(form: Form) -> None:
+    body = read_line("claim", f"{form.example} = 1")
+    assert isinstance(body, Comparison)
+    assert show(body.items[0]) == form.example
+    if isinstance(body.items[0], Measure):
+        assert body.items[0].kind == form.alias
+
+
+@pytest.mark.parametrize("form", forms_of(Kind.REFERENCE), ids=lambda form: form.alias)
+def test_a_reference_stands_in_a_meet_or_a_distance(form: Form) -> None:
+    place = form.alias in ("point", "centre_of")
+    text = f"dist({form.example}, BC) = 1" if place else f"dist(P, {form.example}) = 1"
+    assert show(read_line("claim", text)) == text
+
+
+SYNONYMS = (
+    ("O = circumcenter of ABC", "O = circumcentre of ABC"),
+    ("H = orthocenter of ABC", "H = orthocentre of ABC"),
+    ("I = incenter of ABC", "I = incentre of ABC"),
+    ("J = excenter of ABC opposite A", "J = excentre of ABC opposite A"),
+    ("N = nine-point center of ABC", "N = nine-point centre of ABC"),
+    ("O = center of circle ABC", "O = centre of ABC"),
+    ("trapezoid ABCD", "trapezium ABCD"),
+    ("P lies on line AB", "P on line AB"),
+    ("P lies on AB", "P on line AB"),
+    ("P on l", "P on line l"),
+    ("P lies inside ABC", "P inside triangle ABC"),
+    ("P on the perp. bisector of AB", "P on perpendicular bisector of AB"),
+    ("P on the bisector of angle ABC", "P on bisector of angle ABC"),
+    ("D = foot of perpendicular from A on line BC", "D = foot of A on BC"),
+    ("X = intersection of line AB and circle k", "X = meet of AB and k"),
+    ("X = meet of circle ABC and line l", "X = meet of ABC and l"),
+    ("D = apex of equilateral triangle on BC toward A", "D = apex of equilateral triangle on BC towards A"),
+    ("A’ = reflection of A in line BC", "A' = reflection of A in BC"),
+    ("A'' = reflection of A in l", "A'' = reflection of A in l"),
+    ("D = foot of (centre of k) on BC", "D = foot of centre of k on BC"),
+    ("k = circumcircle of ABC", "k = circle ABC"),
+    ("m = tangent to circle k at A", "m = tangent to k at A"),
+    ("m = parallel to line l through centre of k", "m = parallel to l through centre of k"),
+    ("point P", "point P"),
+    ("points P", "point P"),
+    ("line AB parallel to line l", "AB parallel to l"),
+)
+
+
+@pytest.mark.parametrize(("written", "unified"), SYNONYMS)
+def test_synonyms_are_unified(written: str, unified: str) -> None:
+    body = read_line("given", written)
+    assert show(body) == unified
+    assert read_line("given", unified) == body
+
+
+CONDITIONS = (
+    ("P and Q lie on opposite sides of AB", "P and Q on opposite sides of AB"),
+    ("P and Q on the opposite side of line AB", "P and Q on opposite sides of AB"),
+    ("P and Q on same side of l", "P and Q on the same side of l"),
+    ("C lies between A and B", "C between A and B"),
+    ("triangle ABC acute", "ABC acute"),
+    ("P lies outside triangle ABC", "P outside ABC"),
+    ("AB perp. to CD", "AB perpendicular to CD"),
+    ("|AB| ≤ |AC| ≥ 1", "|AB| <= |AC| >= 1"),
+    ("2·|AB|×|CD| − 1 > 0", "2|AB|*|CD| - 1 > 0"),
+    ("((C between A and B))", "C between A and B"),
+    ("(not (C between A and B))", "not C between A and B"),
+    ("dist(centre of k, line l) = 1", "dist(centre of k, l) = 1"),
+    ("|A'B′| = |A’’B|", "|A'B'| = |A''B|"),
+    ("| AB |=1", "|AB| = 1"),
+    ("1/2 |AB| = 0.25|CD|", "1/2|AB| = 1/4|CD|"),
+    ("|AB|^(-2) = 1", "|AB|^-2 = 1"),
+)
+
+
+@pytest.mark.parametrize(("written", "unified"), CONDITIONS)
+def test_synonyms_in_conditions_are_unified(written: str, unified: str) -> None:
+    body = read_line("provided", written)
+    assert show(body) == unified
+    assert read_line("claim", unified) == body
