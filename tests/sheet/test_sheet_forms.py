@@ -43,7 +43,9 @@ def test_a_form_says_what_it_is(form: Form) -> None:
 STATED = [(form, keyword) for form in FORMS.values() for keyword in form.under]
 
 
-@pytest.mark.parametrize(("form", "keyword"), STATED, ids=[f"{form.alias} {keyword}" for form, keyword in STATED])
+@pytest.mark.parametrize(
+    ("form", "keyword"), STATED, ids=[f"{form.alias} {keyword}" for form, keyword in STATED]
+)
 def test_an_example_reads_as_its_form(form: Form, keyword: str) -> None:
     body = read_line(keyword, form.example)
     if isinstance(body, Fact | Relation):
@@ -133,3 +135,44 @@ def test_synonyms_in_conditions_are_unified(written: str, unified: str) -> None:
     body = read_line("provided", written)
     assert show(body) == unified
     assert read_line("claim", unified) == body
+
+
+CONTRACT = """
+given: point P; points A, B, C; triangle ABC; quadrilateral ABCD; equilateral triangle ABC
+given: isosceles triangle ABC with apex A; right triangle ABC with right angle at C; square ABCD
+given: rectangle ABCD; parallelogram ABCD; rhombus ABCD; kite ABCD; trapezium ABCD
+given: cyclic quadrilateral ABCD; tangential quadrilateral ABCD; regular pentagon ABCDE; regular hexagon ABCDEF
+given: P on line AB; P on segment AB; P on ray AB; P on circle ABC; P on circle k; P on line l
+given: P on perpendicular bisector of AB; P on bisector of angle BAC; P inside triangle ABC
+given: M = midpoint of AB; D = foot of A on BC; D = foot of bisector of angle BAC on BC
+given: A' = reflection of A in M; A' = reflection of A in line BC; G = centroid of ABC
+given: O = circumcentre of ABC; H = orthocentre of ABC; I = incentre of ABC; J = excentre of ABC opposite A
+given: N = nine-point centre of ABC; T = touch point of incircle of ABC on BC
+given: D = apex of equilateral triangle on BC; D = apex of equilateral triangle on BC away from A
+given: D = apex of equilateral triangle on BC towards A; D, E = corners of square on BC away from A
+given: D, E = corners of square on BC towards A; X = meet of AB and CD; X = meet of l and m; X = meet of l and AB
+given: X = meet of line l and circle k; X = meet of AB and circle k; X = meet of circle k and circle m
+given: X = meet of line l and circle k other than A; X = meet of circle k and circle m other than A
+given: k = circle ABC; k = circle with centre O through A; k = circle with diameter AB
+given: k = circle with centre O and radius 2; k = incircle of ABC; l = line AB; l = parallel to AB through C
+given: l = perpendicular to AB through C; l = tangent to k at A; A, B, C collinear; A, B, C, D concyclic
+given: AB parallel to CD; AB perpendicular to CD; |DE| = |BC|/3; |PF| + |PG| = 4; l parallel to m
+claim: A, B, C collinear; A, B, C, D concyclic; AB parallel to CD; AB perpendicular to CD; |DE| = |BC|/3
+provided: C between A and B; P inside ABC; P outside ABC; P and Q on the same side of AB
+provided: P and Q on opposite sides of AB; angle BAC acute; angle BAC right; angle BAC obtuse; ABC acute; ABC obtuse
+provided: ABCD convex; A, B distinct; |AB| < |AC|; not (A, B distinct or ABC acute) and ABCD convex
+claim: |AB| = dist(P, BC); dist(P, l) < area(ABC); perimeter(ABC) = circumradius(ABC); inradius(ABC) > 0
+claim: exradius(ABC, A) = median(ABC, A); altitude(ABC, A) <= bisector(ABC, A); cos(BAC) >= sin(BAC)
+claim: 3/4 = 0.75; sqrt(|AB|) = abs(|AB| - 1); 2|AB| + 1/2|CD|*3 - |AB|/|CD|^2 = 1; 1 < |AB| <= 2
+"""
+STATEMENTS = [
+    (line.split(":", 1)[0], text.strip())
+    for line in CONTRACT.strip().splitlines()
+    for text in line.split(":", 1)[1].split(";")
+]
+
+
+@pytest.mark.parametrize(("keyword", "text"), STATEMENTS, ids=lambda value: value)
+def test_the_contract_reads_and_prints_again(keyword: str, text: str) -> None:
+    body = read_line(keyword, text)
+    assert read_line(keyword, show(body)) == body

@@ -275,7 +275,9 @@ FILES = (
 
 
 @pytest.mark.parametrize(("text", "line", "column", "said"), FILES, ids=lambda value: repr(value)[:60])
-def test_a_wrong_file_is_answered_at_its_place(text: str, line: int, column: int, said: tuple[str, ...]) -> None:
+def test_a_wrong_file_is_answered_at_its_place(
+    text: str, line: int, column: int, said: tuple[str, ...]
+) -> None:
     with pytest.raises(SheetError) as caught:
         read_text(text)
     error = caught.value

@@ -30,7 +30,13 @@ def test_an_absent_stale_or_broken_table_is_rebuilt(tmp_path: Path) -> None:
     assert build_table(GRAMMAR) == right
     path = tmp_path / "table.json"
     assert load_table(table_file=str(path)) == right
-    for text in ("", "{}", "[]", "{", Path(TABLE_FILE).read_text(encoding="utf-8").replace(fingerprint(GRAMMAR), "0")):
+    for text in (
+        "",
+        "{}",
+        "[]",
+        "{",
+        Path(TABLE_FILE).read_text(encoding="utf-8").replace(fingerprint(GRAMMAR), "0"),
+    ):
         path.write_text(text, encoding="utf-8")
         assert load_table(table_file=str(path)) == right
 
@@ -68,8 +74,7 @@ def test_lark_itself_reads_the_examples() -> None:
 
 def test_words_of_messages_are_words_of_the_grammar() -> None:
     words = load_table().words
-    assert FUNCTIONS <= words
-    assert UNOFFERED <= words
+    assert words >= FUNCTIONS | UNOFFERED
     assert set(RUN_WORDS) == set(RUNS)
 
 
@@ -80,11 +85,12 @@ def test_reading_a_sheet_does_not_import_lark() -> None:
         "sys.exit(any(m.split('.')[0] in ('lark', 'difflib', 'sympy', 'flint') for m in sys.modules))"
     )
     source = str(Path(GRAMMAR_FILE).parents[2])
-    assert subprocess.run([sys.executable, "-c", code], env={**os.environ, "PYTHONPATH": source}).returncode == 0
+    assert (
+        subprocess.run([sys.executable, "-c", code], env={**os.environ, "PYTHONPATH": source}).returncode == 0
+    )
 
 
-def test_the_table_can_be_written_by_hand() -> None:
-    before = Path(TABLE_FILE).read_bytes()
+def test_the_build_command_can_check() -> None:
     source = str(Path(GRAMMAR_FILE).parents[2])
     done = subprocess.run(
         [sys.executable, "-m", "surdwise.sheet.build", "--check"],
@@ -92,5 +98,4 @@ def test_the_table_can_be_written_by_hand() -> None:
         capture_output=True,
         text=True,
     )
-    assert done.returncode == 0, done.stderr
-    assert Path(TABLE_FILE).read_bytes() == before
+    assert (done.returncode, done.stdout) == (0, "table.json is current\n"), done.stderr

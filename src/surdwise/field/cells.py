@@ -11,7 +11,7 @@ from __future__ import annotations
 from collections.abc import Iterable, Iterator
 from itertools import combinations
 
-from flint import fmpq
+from flint import arb, fmpq, fmpz_poly
 
 from . import ring
 from .real import START_PREC, isolate, simplest_between
@@ -52,16 +52,21 @@ def known_sign(p: Poly, positive: frozenset[int]) -> int:
 
 
 def open_cells(
-    polys: Iterable[Poly], order: list[int], positive: frozenset[int], limit: int = 200_000
+    polys: Iterable[Poly],
+    order: list[int],
+    positive: frozenset[int],
+    avoid: Iterable[Poly] = (),
+    limit: int = 200_000,
 ) -> Iterator[Sample]:
     """One rational sample in every open cell of the polynomials' complement.
 
     `order` lists the parameters, first the one decided first; those in `positive` range over
-    (0, oo) only.  Raises TooManyCells past `limit` samples.
+    (0, oo) only.  No sample is a zero of a polynomial of `avoid`, which bound no cell.  Raises
+    TooManyCells past `limit` samples.
     """
     levels = project(polys, order, positive)
     count = 0
-    for s in _lift(levels, order, positive, 0, {}):
+    for s in _lift(levels, order, positive, 0, {}, list(avoid)):
         count += 1
         if count > limit:
             raise TooManyCells(f"more than {limit} cells")
@@ -100,7 +105,12 @@ def project(polys: Iterable[Poly], order: list[int], positive: frozenset[int]) -
 
 
 def _lift(
-    levels: list[list[Poly]], order: list[int], positive: frozenset[int], i: int, sample: Sample
+    levels: list[list[Poly]],
+    order: list[int],
+    positive: frozenset[int],
+    i: int,
+    sample: Sample,
+    avoid: list[Poly],
 ) -> Iterator[Sample]:
     if i == len(order):
         yield dict(sample)
@@ -108,17 +118,33 @@ def _lift(
     k = order[i]
     slot = ring.param_slot(k)
     polys = [ring.univariate(ring.substitute(p, sample), slot) for p in levels[i]]
-    for value in gaps([p for p in polys if p.degree() > 0], k in positive):
+    for low, high in gaps([p for p in polys if p.degree() > 0], k in positive):
+        value = _pick(low, high, k, avoid)
         sample[k] = value
-        yield from _lift(levels, order, positive, i + 1, sample)
+        left = [ring.substitute(p, {k: value}) for p in avoid]
+        yield from _lift(levels, order, positive, i + 1, sample, left)
     sample.pop(k, None)
 
 
-def gaps(polys: list[object], positive: bool) -> list[Rational]:
-    """Rational points, one in every open interval cut out by the real roots of integer
-    polynomials (of the positive half-line, if so asked)."""
-    from flint import fmpz_poly
+def _pick(low: Rational | None, high: Rational | None, k: int, avoid: list[Poly]) -> Rational:
+    """A plain rational in the interval at which no polynomial of `avoid` vanishes for good."""
+    while True:
+        value = simplest_between(low, high)
+        if not any(ring.substitute(p, {k: value}).is_zero() for p in avoid):
+            return value
+        # finitely many values are bad: go on in the part nearer to the middle
+        if high is None or (low is not None and value - low > high - value):
+            high, low = (value, low) if low is not None else (high, value)
+        else:
+            low = value
 
+
+Gap = tuple[Rational | None, Rational | None]
+
+
+def gaps(polys: list[fmpz_poly], positive: bool) -> list[Gap]:
+    """The open intervals cut out by the real roots of integer polynomials (of the positive
+    half-line, if so asked), shrunk to rational ends; None stands for infinity."""
     whole = fmpz_poly([1])
     for p in polys:
         g = whole.gcd(p)
@@ -138,30 +164,23 @@ def gaps(polys: list[object], positive: bool) -> list[Rational]:
         if all(a < b for a, b in zip(roots, roots[1:], strict=False)):
             break
         prec *= 2
-    ends = [(_rational(r.lower()), _rational(r.upper())) for r in roots]
     low: Rational | None = fmpq(0) if positive else None
-    out = []
-    for a, b in ends:
-        out.append(simplest_between(low, a))
-        low = b
-    out.append(simplest_between(low, None))
+    out: list[Gap] = []
+    for r in roots:
+        out.append((low, _rational(r.lower())))
+        low = _rational(r.upper())
+    out.append((low, None))
     return out
 
 
-def _squarefree(p: object) -> object:
-    from flint import fmpz_poly
-
-    assert isinstance(p, fmpz_poly)
+def _squarefree(p: fmpz_poly) -> fmpz_poly:
     if p.degree() < 2:
         return p
     g = p.gcd(p.derivative())
     return p // g if g.degree() > 0 else p
 
 
-def _rational(x: object) -> Rational:
-    """A ball's end as an exact rational."""
-    from flint import arb
-
-    assert isinstance(x, arb)
+def _rational(x: arb) -> Rational:
+    """An exact ball as a rational."""
     man, exp = x.mid().man_exp()
     return fmpq(int(man)) * fmpq(2) ** int(exp) if exp >= 0 else fmpq(int(man), 2 ** -int(exp))

@@ -122,6 +122,16 @@ class Tower:
         tower = self._extended(step)
         return tower, tower.element(s * g, radicand.den)
 
+    def adjoin_symbol(self, square: Element) -> tuple[Tower, Element]:
+        """Adjoin a symbol with a given square without asking whether it is one already: the
+        result is a ring, a field only if it was not.  Denominators are taken out."""
+        k = len(self.gens)
+        g = ring.gen(k)
+        whole = self.reduce(square.num * square.den)
+        step = Gen(k, g * g - whole, 2, whole, "either", ONE, "symbol")
+        tower = Tower((*self.gens, step), self.points)
+        return tower, tower.element(g, square.den)
+
     def adjoin_root(self, coefficients: Sequence[Element], label: str) -> tuple[Tower, Element]:
         """Adjoin a root (any real one) of an irreducible polynomial given by its ascending
         coefficients; degree at least 2.  Degree 2 becomes a square root by completing the square.

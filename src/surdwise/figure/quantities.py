@@ -231,7 +231,7 @@ def _area2(r: Reader, q: Measure) -> Element:
 
 
 MEASURES: dict[str, Callable[[Reader, Measure], Element]] = {
-    "length": lambda r, q: r.root(_length2(r, q)),
+    "length": lambda r, q: r.span(q.points[0], q.points[1]),
     "dist": _dist,
     "area": lambda r, q: r.absolute(_twice_area(r, q)) * Fraction(1, 2),
     "perimeter": _perimeter,

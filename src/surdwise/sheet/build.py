@@ -1,7 +1,7 @@
 """Turn grammar.lark into the parse table the reader runs on.
 
 Run `python -m surdwise.sheet.build` after every change of the grammar; it writes
-table.json beside it.  Only this module needs lark: reading a sheet with a current table
+table.json beside it.  With --check it only says whether that is current.  Only this module needs lark: reading a sheet with a current table
 does not import it.
 """
 
@@ -10,6 +10,7 @@ from __future__ import annotations
 import json
 import os
 import sys
+from collections.abc import Sequence
 from typing import Any
 
 from .table import GRAMMAR_FILE, TABLE_FILE, Table, fingerprint, table_from_data
@@ -96,14 +97,21 @@ def dump(data: dict[str, Any]) -> str:
     return "{\n" + ",\n".join(parts) + "\n}\n"
 
 
-def main() -> None:
-    """Write table.json next to grammar.lark."""
+def main(arguments: Sequence[str]) -> int:
+    """Write table.json next to grammar.lark; with --check only say whether it is current (0 or 1)."""
     with open(GRAMMAR_FILE, encoding="utf-8") as file:
         text = dump(build_data(file.read()))
+    name = os.path.basename(TABLE_FILE)
+    if list(arguments) == ["--check"]:
+        with open(TABLE_FILE, encoding="utf-8") as file:
+            current = file.read() == text
+        sys.stdout.write(f"{name} is {'current' if current else 'stale'}\n")
+        return 0 if current else 1
     with open(TABLE_FILE, "w", encoding="utf-8", newline="\n") as file:
         file.write(text)
-    sys.stdout.write(f"wrote {os.path.basename(TABLE_FILE)}, {len(text)} bytes\n")
+    sys.stdout.write(f"wrote {name}, {len(text)} characters\n")
+    return 0
 
 
 if __name__ == "__main__":
-    main()
+    sys.exit(main(sys.argv[1:]))

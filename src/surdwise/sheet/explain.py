@@ -63,7 +63,7 @@ def explain(table: Table, statement: Statement, failure: Unexpected) -> Problem:
             else "constructions belong under `given`"
         )
         return Problem(
-            problem.span, problem.message, f"{problem.hint}; {belongs}" if problem.hint else belongs
+            problem.span, problem.message, f"{problem.hint} ({belongs})" if problem.hint else belongs
         )
     return _misplaced(statement, parsed)
 
@@ -138,7 +138,9 @@ def _advice(table: Table, statement: Statement, failure: Unexpected) -> str:
     before = failure.before.text if failure.before else ""
     last, state = failure.states[-1], resting(table, failure.states)[-1]
     for lesson in LESSONS:
-        if lesson.look and not re.compile(lesson.look).match(statement.source, token.column - 1, statement.stop):
+        if lesson.look and not re.compile(lesson.look).match(
+            statement.source, token.column - 1, statement.stop
+        ):
             continue
         if lesson.behind and not re.fullmatch(lesson.behind, before):
             continue

@@ -66,6 +66,24 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     yield from _convexes(sheet, pts)
 
 
+def says_the_same(c: Condition, claim: Condition) -> bool:
+    """Whether a condition compares just what the claim compares: no news as a side condition."""
+    if not isinstance(c, Comparison) or not isinstance(claim, Comparison):
+        return c == claim
+    return _sides_of(c) == _sides_of(claim)
+
+
+def _sides_of(c: Comparison) -> set[object]:
+    return {_turned(q) for q in c.items}
+
+
+def _turned(q: Quantity) -> object:
+    """A length without the order of its ends."""
+    if isinstance(q, Measure) and q.kind == "length":
+        return frozenset(str(p) for p in q.points)
+    return q
+
+
 def _collinear(c: Component, tri: Sequence[str]) -> bool:
     if any(n not in c.points for n in tri):
         return False
@@ -124,8 +142,14 @@ def _insides(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[P
         for p in pts:
             if p in tri:
                 continue
-            yield Candidate(Relation("inside", (p, tri)), 0.9 + extra)
-            yield Candidate(Relation("outside", (p, tri)), 0.9 + extra)
+            on_side = any(tuple(sorted((p.name, *pair))) in straight for pair in _pairs(tri))
+            cost = 0.9 + extra + (1.5 if on_side else 0.0)
+            yield Candidate(Relation("inside", (p, tri)), cost)
+            yield Candidate(Relation("outside", (p, tri)), cost)
+
+
+def _pairs(tri: Sequence[Pt]) -> list[tuple[str, str]]:
+    return [(a.name, b.name) for a, b in combinations(tri, 2)]
 
 
 def _lengths_compared(

@@ -6,16 +6,19 @@ import time
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 
-from ..field import exact
-from ..field.cells import TooManyCells
+from ..field import exact, roots
+from ..field.cells import TooManyCells, never_zero
 from ..field.real import Branch, Unsettled
 from ..field.ring import PARAM_NAMES, TooLarge
+from ..field.tower import Element
 from ..figure.component import Component
-from ..figure.conditions import Judge, is_closed, is_open, truth
+from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
 from ..figure.program import Program, program
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
+from .algebraic import algebraic_side, dominant
 from .candidates import Candidate, candidates
+from .explain import explain
 from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
 from .spot import Undefined
 from .survey import OutOfTime, Place, Statement, Survey, Surveyor
@@ -53,6 +56,11 @@ class Case:
     deadline: float
     progress: Callable[[str], None]
     lexicon: Lexicon | None = None
+
+    def tick(self) -> None:
+        """Stop when time is out."""
+        if time.monotonic() > self.deadline:
+            raise OutOfTime
 
     def survey(self, statements: Sequence[Statement], closed: bool) -> Survey:
         """Survey all admitted figures for some statements."""
@@ -249,10 +257,24 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     if verdict is Verdict.EMPTY:
         return replace(out, reason=_why_empty(case, found))
     out = replace(out, holds_at=witness(found.places, 0, True), fails_at=witness(found.places, 0, False))
+    total = true = 0
+    if is_equality(claim):
+        assert isinstance(claim, (Comparison, Relation))
+        side = algebraic_side(dominant(found.components), claim, found.places, case.tick)
+        out = replace(out, algebraic=side.statuses, components=side.components)
+        total, true = side.total, side.true
     try:
-        return _explained(case, whats, parts, found, out)
+        out = _explained(case, whats, parts, found, out)
     except OutOfTime:
-        return replace(out, reason="the verdict is proved; naming where it holds ran out of time")
+        out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")
+    return replace(out, explanation=explain(out, total, true))
+
+
+def is_equality(c: Condition) -> bool:
+    """Whether a claim says that something vanishes."""
+    if isinstance(c, Comparison):
+        return c.ops == ("=",)
+    return isinstance(c, Relation) and c.form in EQUATIONS
 
 
 def _explained(
@@ -276,9 +298,9 @@ def _explained(
         whats = [*whats, *forms]
     n = len(whats) - len(forms)
     said_ = _where(case, whats, found, n)
-    where, exact_ = [w for w, _ in said_], [e for _, e in said_]
+    where, exact_ = [w for w, _, _ in said_], [e for _, e, _ in said_]
     if out.verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
-        out = replace(out, condition=where[0])
+        out = replace(out, condition=where[0], in_frame=said_[0][2])
     if len(parts) == 1 and n == 2:
         out = replace(out, equality=where[1])
     if len(parts) > 1:
@@ -316,24 +338,25 @@ def _only(s: Survey, keep: Sequence[int]) -> Survey:
 
 def _where(
     case: Case, whats: Sequence[Condition], found: Survey, strict: int
-) -> list[tuple[str | None, bool]]:
-    """Where each statement holds, in words, and whether the words are exact on thin sets too;
-    the first `strict` statements get exact words or none."""
-    out: list[tuple[str | None, bool]] = [(None, True)] * len(whats)
+) -> list[tuple[str | None, bool, bool]]:
+    """Where each statement holds, in words, whether the words are exact on thin sets too, and
+    whether they speak of the frame; the first `strict` statements get exact words or none."""
+    out: list[tuple[str | None, bool, bool]] = [(None, True, False)] * len(whats)
     todo = []
     for i in range(len(whats)):
         truths = {bool(p.truths[i]) for p in found.places}
         if truths == {True}:
-            out[i] = ("always", True)
+            out[i] = ("always", True, False)
         elif truths == {False}:
-            out[i] = ("never", True)
+            out[i] = ("never", True, False)
         else:
             todo.append(i)
     if todo:
         loose = frozenset(k for k, i in enumerate(todo) if i >= strict)
         answers = case.named([whats[i] for i in todo], _only(found, todo), loose)
         for i, a in zip(todo, answers, strict=True):
-            out[i] = (None if a.condition is None else said(a.condition), a.exact)
+            c = a.condition
+            out[i] = (None if c is None else said(c), a.exact, c is not None and in_frame(c))
     return out
 
 
@@ -386,9 +409,13 @@ def _degenerate(found: Survey) -> tuple[str, ...]:
     words: list[str] = []
     if found.top is not None:
         for c in found.top.components:
-            shut = {r.element.key() for r in c.requires}
+            shut: set[str] = set()
+            for r in c.requires:
+                shut |= set(roots.norm_factors(Element(c.tower, r.element.num, r.element.den)))
             for g in c.guards:
-                if g.element.key() not in shut and g.words not in words:
+                zeros = roots.norm_factors(Element(c.tower, g.element.num, g.element.den))
+                real = [n for n, p in zeros.items() if n not in shut and not never_zero(p, c.positive)]
+                if real and g.words not in words:
                     words.append(g.words)
     words += [w for w in sorted(found.undefined) if w not in words]
     words += [f"{w}: not examined" for w in found.not_examined]

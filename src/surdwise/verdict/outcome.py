@@ -93,4 +93,4 @@ class Decision:
     certificate: str | None = None
     reason: str = ""
     explanation: str = ""
-    repaired: str | None = None
+    in_frame: bool = False

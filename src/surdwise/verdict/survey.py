@@ -47,6 +47,7 @@ class Survey:
     not_examined: list[str] = field(default_factory=list)
     undefined: set[str] = field(default_factory=set)
     top: Run | None = None
+    components: list[Component] = field(default_factory=list)
     dead: list[tuple[int, str]] = field(default_factory=list)
     borders: dict[str, Poly] = field(default_factory=dict)
     strata: int = 0
@@ -94,6 +95,7 @@ class Surveyor:
         if depth == 0:
             self.result.dead += run.dead
         todo: dict[str, tuple[Poly, int]] = {n: (p, 98) for n, p in run.strata.items()}
+        self.result.components += run.components
         for comp, borders in zip(run.components, run.borders, strict=True):
             if len(comp.free) > ceiling:
                 continue
@@ -112,8 +114,10 @@ class Surveyor:
             self.progress(f"{self.result.strata} strata, {self.result.cells} cells")
             self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling))
             done.append(p)
+        bound = {k for p in eqs for k in ring.params_in(p)}
         for step in sorted(run.charts - missed):
-            if not missed or step > max(missed):
+            own = {k for (s, _), k in self.program.frame.slots.items() if s == step}
+            if (not missed or step > max(missed)) and not own & bound:
                 self._stratum(list(eqs), missed | {step}, list(excluded), depth, ceiling)
 
     def _matters(self, register: Register, found: list[Place]) -> dict[str, Poly]:
@@ -140,7 +144,8 @@ class Surveyor:
             count = register.count()
             places: list[Place] = []
             loose = 0
-            for sample in cells.open_cells(register.borders(), order, comp.positive):
+            thin = list(register.of(["thin"]).values())
+            for sample in cells.open_cells(register.borders(), order, comp.positive, thin):
                 self.tick()
                 self.result.cells += 1
                 try:
@@ -150,7 +155,7 @@ class Surveyor:
                             places.append(place)
                 except Unsettled:
                     loose += 1
-            if register.count() == count:
+            if register.count() == count and len(thin) == len(register.of(["thin"])):
                 if loose:
                     raise Unsettled("a sample lies on a special place that no border explains")
                 self.result.places += places

@@ -17,7 +17,7 @@ from ..field.real import Unsettled
 from ..figure.conditions import truth
 from ..sheet.show import show
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Relation
-from .candidates import Candidate, all_of, any_of
+from .candidates import Candidate, all_of, any_of, says_the_same
 from .spot import Hint, Undefined
 from .survey import Place
 
@@ -61,7 +61,7 @@ class Lexicon:
                 masks[k] = None if t is None else m | (1 << i) if t else m
         best: dict[int, Literal] = {}
         for c, mask in zip(self.cands, masks, strict=True):
-            if mask is None or mask in (0, whole) or c.condition == but:
+            if mask is None or mask in (0, whole) or says_the_same(c.condition, but):
                 continue
             for lit in (Literal(c.condition, mask, c.cost), _negative(c, whole & ~mask)):
                 old = best.get(lit.mask)

@@ -1,0 +1,5 @@
+"""`python -m surdwise`."""
+
+from .cli import app
+
+app(prog_name="surdwise")

@@ -1,0 +1,225 @@
+"""The command line; thin: it reads, calls the interface, prints, and sets the exit code."""
+
+from __future__ import annotations
+
+import json
+import sys
+import time
+from collections.abc import Callable
+from pathlib import Path
+from typing import Annotated
+
+import typer
+
+from . import __version__
+from .sheet import Sheet, SurdwiseError, read_file
+
+app = typer.Typer(
+    name="surdwise",
+    help="Statements about distances in plane figures, decided as written.",
+    no_args_is_help=True,
+    pretty_exceptions_enable=False,
+    context_settings={"help_option_names": ["-h", "--help"]},
+)
+
+BAD_SHEET = 2
+
+Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default=False)]
+TimeLimit = Annotated[
+    float | None, typer.Option("--time-limit", help="Seconds for each claim; the work is killed then.", min=0.01)
+]
+MemoryLimit = Annotated[int | None, typer.Option("--memory-limit", help="MiB for each sheet's work.", min=16)]
+
+
+def _version(value: bool) -> None:
+    if value:
+        print(f"surdwise {__version__}")
+        raise typer.Exit
+
+
+@app.callback()
+def main(
+    version: Annotated[
+        bool, typer.Option("--version", help="Print the version.", callback=_version, is_eager=True)
+    ] = False,
+) -> None:
+    """Statements about distances in plane figures, decided as written."""
+
+
+def _read(path: Path) -> tuple[Sheet, ...]:
+    try:
+        return read_file(path)
+    except SurdwiseError as e:
+        print(e, file=sys.stderr)
+        raise typer.Exit(BAD_SHEET) from None
+
+
+def _progress() -> Callable[[str], None]:
+    """Progress on a terminal for work over two seconds; silence in a pipe."""
+    if not sys.stderr.isatty():
+        return lambda text: None
+    start = last = time.monotonic()
+
+    def show(text: str) -> None:
+        nonlocal last
+        now = time.monotonic()
+        if now - start > 2 and now - last > 0.2:
+            last = now
+            print(f"\r\x1b[2m{now - start:5.1f} s  {text}\x1b[0m\x1b[K", end="", file=sys.stderr, flush=True)
+
+    return show
+
+
+def _decide_all(sheet: Sheet, soft: float) -> object:
+    from .api import decide
+
+    return decide(sheet, time_limit=soft, progress=_progress())
+
+
+@app.command()
+def decide(
+    sheets: Sheets,
+    as_json: Annotated[bool, typer.Option("--json", help="One JSON object for each claim.")] = False,
+    repair: Annotated[
+        Path | None, typer.Option("--repair", help="Write the sheet with its side conditions to this file.")
+    ] = None,
+    time_limit: TimeLimit = None,
+    memory_limit: MemoryLimit = None,
+) -> None:
+    """Decide every claim: does it hold as written, and exactly where?"""
+    from .jsonform import decision_object, worst
+    from .printing import decision_text, wants_colour
+
+    done = []
+    mended = []
+    for path in sheets:
+        for sheet in _read(path):
+            decisions = _decided(sheet, time_limit, memory_limit)
+            if sys.stderr.isatty():
+                print("\r\x1b[K", end="", file=sys.stderr)
+            done += decisions
+            if repair is not None:
+                from .api import repair as mend
+
+                mended.append(mend(sheet, decisions))
+            if as_json:
+                for d in decisions:
+                    print(json.dumps(decision_object(d), ensure_ascii=False))
+                continue
+            print(f"{sheet.title or 'untitled'}  ({sheet.file})\n")
+            for d in decisions:
+                print(decision_text(d, wants_colour()) + "\n")
+    if repair is not None:
+        repair.write_text("---\n".join(mended), encoding="utf-8")
+    raise typer.Exit(worst([d.verdict for d in done]))
+
+
+def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None) -> list:  # type: ignore[type-arg]
+    """Decisions of one sheet, in a killable process where limits are asked for."""
+    from dataclasses import replace
+
+    from .api import decide as work
+    from .sheet import show
+    from .verdict.outcome import Decision, Verdict
+
+    if seconds is None and mebibytes is None:
+        return list(work(sheet, progress=_progress()))
+    from .limits import LimitReached, run_limited
+
+    out = []
+    for line in sheet.claims:
+        one = replace(sheet, claims=(line,))
+        hard = None if seconds is None else seconds + 0.5
+        try:
+            out += run_limited(_decide_all, one, seconds or 60.0, seconds=hard, mebibytes=mebibytes)
+        except LimitReached as e:
+            text = show(line.body)
+            out.append(Decision(sheet.file, sheet.title, text, Verdict.UNDECIDED, reason=str(e)))
+    return out
+
+
+@app.command()
+def rewrite(
+    sheet: Annotated[Path, typer.Argument(help="A claim sheet.", show_default=False)],
+    form: Annotated[
+        str | None,
+        typer.Option("--form", help="auxiliary, squared, sign_product, eliminant or minimal; all if not given."),
+    ] = None,
+    to: Annotated[str, typer.Option("--to", help="text, latex, sympy or singular.")] = "text",
+) -> None:
+    """Rewrite every claim free of roots, in five formulations."""
+    from .api import rewrite as work
+    from .printing import table
+    from .thesis.export import EXPORTS
+    from .thesis.parts import Form
+
+    known = {f.value: f for f in Form}
+    if form is not None and form.replace(" ", "_").replace("-", "_") not in known:
+        _usage(f"expected one of {', '.join(known)} after --form, got {form!r}")
+    if to not in EXPORTS:
+        _usage(f"expected one of {', '.join(EXPORTS)} after --to, got {to!r}")
+    forms = list(Form) if form is None else [known[form.replace(" ", "_").replace("-", "_")]]
+    script = to in ("sympy", "singular")
+    mark = {"sympy": "# ", "singular": "// ", "latex": "% ", "text": ""}[to]
+    for s in _read(sheet):
+        for r in work(s, forms):
+            print(f"{mark}claim {r.claim}")
+            if r.thesis is None:
+                print(f"{mark}not rewritten: {r.why_not}")
+                continue
+            for text in r.legend():
+                print(mark + text)
+            for f in r.formulations:
+                print(f"\n{mark}{f.form.value.replace('_', ' ')}" if script or to == "latex" else f"\n{f.form.value}:")
+                print(r.export(f.form, to))
+            if form is None and to == "text":
+                head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds"]
+                rows = [_cost_row(f.form.value, f, f.seconds) for f in r.formulations]
+                print("\n" + table(head, rows))
+            print()
+
+
+def _cost_row(name: str, f: object, seconds: float) -> list[str]:
+    from .thesis.formulations import Formulation
+
+    assert isinstance(f, Formulation)
+    return [
+        name.replace("_", " "),
+        str(f.unknowns),
+        str(f.degree),
+        str(f.terms),
+        str(f.largest) if f.largest < 10**9 else f"{float(f.largest):.1e}",
+        f"{seconds:.6f}",
+    ]
+
+
+@app.command()
+def compare(
+    sheets: Sheets,
+    repeat: Annotated[int, typer.Option("--repeat", help="Runs of each formulation.", min=1)] = 5,
+) -> None:
+    """What each formulation of every equality costs: medians of repeated runs."""
+    from .api import compare as work
+    from .printing import table
+
+    for path in sheets:
+        for sheet in _read(path):
+            costs = work(sheet, repeat)
+            for claim in dict.fromkeys(c.claim for c in costs):
+                print(f"{claim}  ({sheet.file})\n")
+                head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds", "spread"]
+                rows = [
+                    [*_cost_row(c.formulation.form.value, c.formulation, c.seconds), f"{c.spread:.6f}"]
+                    for c in costs
+                    if c.claim == claim
+                ]
+                print(table(head, rows) + "\n")
+
+
+def _usage(text: str) -> None:
+    print(text, file=sys.stderr)
+    raise typer.Exit(BAD_SHEET)
+
+
+if __name__ == "__main__":
+    app()
