@@ -6,8 +6,23 @@ import re
 
 import pytest
 
-from surdwise.sheet import FORMS, Comparison, Fact, Form, Kind, Measure, Relation, forms_of, read_line, show
+from surdwise.sheet import (
+    FORMS,
+    Comparison,
+    Fact,
+    Form,
+    Kind,
+    Measure,
+    Named,
+    Pt,
+    Relation,
+    forms_of,
+    read_line,
+    read_text,
+    show,
+)
 from surdwise.sheet.table import GRAMMAR_FILE, load_table
+from surdwise.sheet.walk import parts
 
 FIGURE_KINDS = (Kind.FREE, Kind.SHAPE, Kind.POINT_ON, Kind.MADE, Kind.MEET, Kind.CURVE)
 
@@ -141,7 +156,8 @@ CONTRACT = """
 given: point P; points A, B, C; triangle ABC; quadrilateral ABCD; equilateral triangle ABC
 given: isosceles triangle ABC with apex A; right triangle ABC with right angle at C; square ABCD
 given: rectangle ABCD; parallelogram ABCD; rhombus ABCD; kite ABCD; trapezium ABCD
-given: cyclic quadrilateral ABCD; tangential quadrilateral ABCD; regular pentagon ABCDE; regular hexagon ABCDEF
+given: cyclic quadrilateral ABCD; tangential quadrilateral ABCD
+given: regular pentagon ABCDE; regular hexagon ABCDEF
 given: P on line AB; P on segment AB; P on ray AB; P on circle ABC; P on circle k; P on line l
 given: P on perpendicular bisector of AB; P on bisector of angle BAC; P inside triangle ABC
 given: M = midpoint of AB; D = foot of A on BC; D = foot of bisector of angle BAC on BC
@@ -150,7 +166,8 @@ given: O = circumcentre of ABC; H = orthocentre of ABC; I = incentre of ABC; J =
 given: N = nine-point centre of ABC; T = touch point of incircle of ABC on BC
 given: D = apex of equilateral triangle on BC; D = apex of equilateral triangle on BC away from A
 given: D = apex of equilateral triangle on BC towards A; D, E = corners of square on BC away from A
-given: D, E = corners of square on BC towards A; X = meet of AB and CD; X = meet of l and m; X = meet of l and AB
+given: D, E = corners of square on BC towards A; X = meet of AB and CD
+given: X = meet of l and m; X = meet of l and AB
 given: X = meet of line l and circle k; X = meet of AB and circle k; X = meet of circle k and circle m
 given: X = meet of line l and circle k other than A; X = meet of circle k and circle m other than A
 given: k = circle ABC; k = circle with centre O through A; k = circle with diameter AB
@@ -159,7 +176,8 @@ given: l = perpendicular to AB through C; l = tangent to k at A; A, B, C colline
 given: AB parallel to CD; AB perpendicular to CD; |DE| = |BC|/3; |PF| + |PG| = 4; l parallel to m
 claim: A, B, C collinear; A, B, C, D concyclic; AB parallel to CD; AB perpendicular to CD; |DE| = |BC|/3
 provided: C between A and B; P inside ABC; P outside ABC; P and Q on the same side of AB
-provided: P and Q on opposite sides of AB; angle BAC acute; angle BAC right; angle BAC obtuse; ABC acute; ABC obtuse
+provided: P and Q on opposite sides of AB; angle BAC acute; angle BAC right; angle BAC obtuse
+provided: ABC acute; ABC obtuse
 provided: ABCD convex; A, B distinct; |AB| < |AC|; not (A, B distinct or ABC acute) and ABCD convex
 claim: |AB| = dist(P, BC); dist(P, l) < area(ABC); perimeter(ABC) = circumradius(ABC); inradius(ABC) > 0
 claim: exradius(ABC, A) = median(ABC, A); altitude(ABC, A) <= bisector(ABC, A); cos(BAC) >= sin(BAC)
@@ -176,3 +194,25 @@ STATEMENTS = [
 def test_the_contract_reads_and_prints_again(keyword: str, text: str) -> None:
     body = read_line(keyword, text)
     assert read_line(keyword, show(body)) == body
+
+
+@pytest.mark.parametrize(("keyword", "text"), STATEMENTS, ids=lambda value: value)
+def test_the_contract_stands_in_a_sheet(keyword: str, text: str) -> None:
+    """With what it refers to made before it, and nothing else."""
+    body = read_line(keyword, text)
+    new: set[str] = set()
+    if isinstance(body, Fact):
+        brought = [body.args[index] for index in FORMS[body.form].new]
+        new = {part.name for arg in brought for part in parts(arg) if isinstance(part, Pt | Named)}
+    used = {part.name for part in parts(body) if isinstance(part, Pt)} - new
+    named = {part.name for part in parts(body) if isinstance(part, Named)} - new
+    lines = [f"given point {name}" for name in sorted(used | {"U", "V", "W"})]
+    both_circles = "circle m" in text
+    for name in sorted(named):
+        lines.append(
+            f"given {name} = "
+            + ("circle UVW" if name == "k" or (both_circles and name == "m") else "line UV")
+        )
+    lines.append(f"{keyword} {text}")
+    (sheet,) = read_text("\n".join([*lines, "claim 1 = 1"]))
+    assert body in [line.body for line in (*sheet.given, *sheet.provided, *sheet.claims)]

@@ -33,6 +33,7 @@ from surdwise.sheet import (
     read_text,
     show,
 )
+from surdwise.sheet.lessons import PLACES
 
 CHORDS = """\
 title    Sum of chords from a point of the circle
@@ -264,8 +265,7 @@ def test_a_message_in_full() -> None:
         "                  ^^",
     ]
     assert message("given trangle ABC") == [
-        "issue.claim:1:7: expected a construction or relation such as `triangle ABC` or "
-        "`M = midpoint of AB`, got `trangle`",
+        f"issue.claim:1:7: expected {PLACES[0].expected}, got `trangle`",
         "given trangle ABC",
         "      ^^^^^^^",
         "did you mean `triangle`?",

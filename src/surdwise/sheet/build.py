@@ -1,8 +1,8 @@
 """Turn grammar.lark into the parse table the reader runs on.
 
 Run `python -m surdwise.sheet.build` after every change of the grammar; it writes
-table.json beside it.  With --check it only says whether that is current.  Only this module needs lark: reading a sheet with a current table
-does not import it.
+table.json beside it.  With --check it only says whether that is current.  Only this module
+needs lark: reading a sheet with a current table does not import it.
 """
 
 from __future__ import annotations
@@ -46,21 +46,21 @@ def build_data(grammar: str) -> dict[str, Any]:
         if state in numbers:
             continue
         numbers[state] = len(numbers)
-        named = {raw["tokens"][key]: action for key, action in raw["states"][state].items()}
+        named = {raw["tokens"][key]: move for key, move in raw["states"][state].items()}
         queue.extend(named[symbol][1] for symbol in sorted(named) if named[symbol][0] == 0)
-    for state in numbers:
+    for state, number in numbers.items():
         actions: dict[str, int] = {}
         gotos: dict[str, int] = {}
-        named = {raw["tokens"][key]: action for key, action in raw["states"][state].items()}
+        named = {raw["tokens"][key]: move for key, move in raw["states"][state].items()}
         for symbol in sorted(named):
             is_reduce, target = named[symbol]
-            number = -1 - rule_number[target["@"]] if is_reduce else numbers[target]
+            action = -1 - rule_number[target["@"]] if is_reduce else numbers[target]
             if symbol in terminal_names:
-                actions[spelled.get(symbol, symbol)] = number
+                actions[spelled.get(symbol, symbol)] = action
             else:
-                gotos[symbol] = number
+                gotos[symbol] = action
         if state in raw["end_states"].values():
-            actions[END] = numbers[state]  # nothing is left to read: the statement is whole
+            actions[END] = number  # nothing is left to read: the statement is whole
         rows.append([actions, gotos])
     return {
         "fingerprint": fingerprint(grammar),

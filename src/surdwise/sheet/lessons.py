@@ -167,12 +167,12 @@ LESSONS = (
     Lesson("given", ("line AB", "line l"), "give it a name: l = line AB; AB alone needs no line of its own"),
     Lesson(
         "given",
-        tuple(f"{word} of ABC" for word in "midpoint foot reflection centroid circumcentre".split()),
+        tuple(f"{word} of ABC" for word in ("midpoint", "foot", "reflection", "centroid", "circumcentre")),
         _FIRST_THE_NAME,
     ),
     Lesson(
         "given",
-        tuple(f"{word} of ABC" for word in "orthocentre incentre centre meet".split()),
+        tuple(f"{word} of ABC" for word in ("orthocentre", "incentre", "centre", "meet")),
         _FIRST_THE_NAME,
     ),
     Lesson(

@@ -10,7 +10,7 @@ from .forms import FORMS
 from .nearest import nearest
 from .parser import Parsed
 from .tree import Arg, CentreOf, Fact, Measure, Named, Pt, Relation, Through
-from .walk import Part, children
+from .walk import Part, children, parts
 
 
 @dataclass
@@ -65,13 +65,14 @@ def _check_fact(fact: Fact, known: Known, later: Mapping[str, int]) -> None:
     if form.fresh:
         for item in items:
             _check_fresh(item, known)
-    own = {item.name for item in items}
+    corner = form.corner[1] if form.corner is not None and form.corner[0] in form.new else -1
+    unmade = {item.name for item in items} - known.points.keys() - known.curves.keys()
     for index, (role, arg) in enumerate(zip(form.args, fact.args, strict=True)):
-        if index in form.new:
+        if index in form.new or index == corner:
             continue
-        for part in arg if isinstance(arg, tuple) else (arg,):
-            if form.fresh and isinstance(part, Pt | Named) and part.name in own:
-                raise Problem(part.span, f"{part.name} cannot be used to make itself")
+        for part in parts(arg):
+            if isinstance(part, Pt | Named) and part.name in unmade:
+                raise Problem(part.span, f"expected what is known, but {part.name} cannot make itself")
         _check_part(arg, role, known, later)
     if fact.form == "meet_other":
         _check_other(fact, known)

@@ -16,14 +16,41 @@ RUN_WORDS = {
     "HEXA": "six points such as ABCDEF",
 }
 FUNCTIONS = frozenset(
-    "dist area perimeter circumradius inradius exradius median altitude bisector cos sin sqrt abs".split()
+    {
+        "dist",
+        "area",
+        "perimeter",
+        "circumradius",
+        "inradius",
+        "exradius",
+        "median",
+        "altitude",
+        "bisector",
+        "cos",
+        "sin",
+        "sqrt",
+        "abs",
+    }
 )
 QUANTITY_STARTS = FUNCTIONS | {"|", "(", "-", "NUMBER", "FRACTION"}
 OPERATORS = frozenset("+-*/^")
 # Spellings and small words that are understood but not offered.
 UNOFFERED = frozenset(
-    "center circumcenter orthocenter incenter excenter trapezoid perp. toward intersection".split()
-    + ["point", "the", "lies", "lie"]
+    {
+        "center",
+        "circumcenter",
+        "orthocenter",
+        "incenter",
+        "excenter",
+        "trapezoid",
+        "perp.",
+        "toward",
+        "intersection",
+        "point",
+        "the",
+        "lies",
+        "lie",
+    }
 )
 MOST_SHOWN = 6
 LONGEST_SHOWN = 40

@@ -4,7 +4,21 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
-from .tree import And, Arg, Binary, CentreOf, Comparison, Condition, Fact, Measure, Not, Or, Relation, Unary
+from .tree import (
+    And,
+    Arg,
+    Binary,
+    CentreOf,
+    Comparison,
+    Condition,
+    Fact,
+    Measure,
+    Not,
+    Or,
+    Relation,
+    Through,
+    Unary,
+)
 
 Part = Fact | Condition | Arg
 
@@ -26,6 +40,8 @@ def children(node: Part) -> tuple[Part, ...]:
             return (*node.points, node.line) if node.line is not None else node.points
         case CentreOf():
             return (node.circle,)
+        case Through():
+            return node.points
         case tuple():
             return node
     return ()
