@@ -21,6 +21,9 @@ from .plane import Curve, Round, Straight, Vec, square
 from .reader import Reader
 
 
+READ = "length"  # label of square roots adjoined by readers of a finished component
+
+
 @dataclass(frozen=True)
 class Require:
     """A real condition on an element: `op` is one of > >= != (against zero)."""
@@ -66,6 +69,11 @@ class Component:
     memo: dict[str, Element] = field(default_factory=dict)
     kept: dict[object, Element] = field(default_factory=dict)
     factors: dict[str, dict[str, Poly]] = field(default_factory=dict)
+
+    def ground(self) -> Tower:
+        """The tower of the figure itself, without lengths that readers adjoined since."""
+        n = sum(1 for g in self.tower.gens if g.label != READ)
+        return self.tower.lower(n)
 
     def copy(self) -> Component:
         """A component that can be built on without touching this one."""

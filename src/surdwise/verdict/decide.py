@@ -302,7 +302,8 @@ def _explained(
     if out.verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
         out = replace(out, condition=where[0], in_frame=said_[0][2])
     if len(parts) == 1 and n == 2:
-        out = replace(out, equality=where[1])
+        settled = not found.not_examined or where[1] != "never"
+        out = replace(out, equality=where[1] if settled else None)
     if len(parts) > 1:
         links = []
         k = 1 + len(parts)

@@ -18,7 +18,7 @@ from ..field.real import Branch, Unsettled
 from ..field.ring import Poly
 from ..field.tower import Element
 from ..figure.base import Base, plug
-from ..figure.component import Component
+from ..figure.component import READ, Component
 from ..figure.conditions import Judge
 from ..figure.plane import Curve, Round, Straight, Vec, square
 
@@ -153,7 +153,7 @@ class Spot(Judge):
             s = self._sign(q, "fold")
             if s < 0:
                 raise Undefined("a square root of a negative quantity")
-        self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", "length")
+        self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", READ)
         orient = self.comp.tower.gens[-1].orient
         if not ring.is_constant(orient):
             self._enter("fold", self.comp.tower.element(orient))

@@ -18,7 +18,10 @@ from ..field.ring import Poly
 from ..figure.component import Component
 from ..figure.conditions import Judge
 from ..figure.program import Program, Run
+from .lift import heavy, lift
 from .spot import Register, Spot, Undefined
+
+EXACT_DEGREE = 8
 
 Statement = Callable[[Judge], bool]
 
@@ -94,6 +97,7 @@ class Surveyor:
             self.result.top = run
         if depth == 0:
             self.result.dead += run.dead
+        points: list[tuple[Poly, ...]] = []
         todo: dict[str, tuple[Poly, int]] = {n: (p, 98) for n, p in run.strata.items()}
         self.result.components += run.components
         for comp, borders in zip(run.components, run.borders, strict=True):
@@ -106,19 +110,47 @@ class Surveyor:
             found = self.result.places[before:]
             if depth == 0 and found:
                 self.result.borders.update(register.polys)
+            curves = []
             for n, p in self._matters(register, found).items():
+                if "figure" not in register.kinds[n] and heavy(p, comp):
+                    curves.append(p)
+                    continue
                 old = todo.get(n)
                 todo[n] = (p, max(len(comp.free) - 1, old[1] if old else 0))
+            if curves:
+                points += self._lift(comp, register, curves, depth)
         done = list(excluded)
         for _, (p, top) in sorted(todo.items(), key=lambda item: (len(item[1][0]), item[0])):
             self.progress(f"{self.result.strata} strata, {self.result.cells} cells")
             self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling))
             done.append(p)
+        for system in points:
+            if system[-1].total_degree() > EXACT_DEGREE:
+                self.result.not_examined.append(f"points of degree {system[-1].total_degree()}")
+                continue
+            self._stratum([*eqs, *system], missed, list(excluded), depth + 2)
         bound = {k for p in eqs for k in ring.params_in(p)}
         for step in sorted(run.charts - missed):
             own = {k for (s, _), k in self.program.frame.slots.items() if s == step}
             if (not missed or step > max(missed)) and not own & bound:
                 self._stratum(list(eqs), missed | {step}, list(excluded), depth, ceiling)
+
+    def _lift(
+        self, comp: Component, register: Register, curves: list[Poly], depth: int
+    ) -> list[tuple[Poly, ...]]:
+        """Examine curves of high degree in balls; returns the points left, as equations."""
+        order = self._order(comp, register)
+        found, left, complete = lift(
+            comp, register, curves, order, self.conditions, self.statements, self.tick
+        )
+        self.result.places += [
+            Place(x.dimension, comp, x.branch, x.truths, depth + 2 - x.dimension)  # type: ignore[arg-type]
+            for x in found
+        ]
+        if not complete:
+            names = ", ".join(f"degree {p.total_degree()}" for p in curves)
+            self.result.not_examined.append(f"points of a border curve ({names})")
+        return left
 
     def _matters(self, register: Register, found: list[Place]) -> dict[str, Poly]:
         """Borders whose strata must be looked at.
@@ -139,7 +171,7 @@ class Surveyor:
 
     def _component(self, comp: Component, register: Register, depth: int) -> None:
         order = self._order(comp, register)
-        tower = comp.tower
+        tower = comp.ground()
         while True:
             count = register.count()
             places: list[Place] = []
