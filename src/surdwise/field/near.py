@@ -150,6 +150,21 @@ def evaluate(p: Poly, params: dict[int, arb], gens: list[arb]) -> arb:
     return total
 
 
+def crossing_box(
+    g: Poly, q: Poly, boxes: list[arb], at: dict[int, Enclosure], v: int, width: int
+) -> int | None:
+    """The position of the one box in which q can vanish, if g is monotone in v there; see
+    verdict/lift.py for what that proves."""
+    prec = 2 * width + 64
+    with ctx.workprec(prec):
+        fixed_ = {k: f(prec) for k, f in at.items()}
+        near = [k for k, b in enumerate(boxes) if evaluate(q, {**fixed_, v: b}, []).contains(0)]
+        if len(near) != 1:
+            return None
+        slope = evaluate(g.derivative(ring.PARAM_NAMES[v]), {**fixed_, v: boxes[near[0]]}, [])
+        return None if slope.contains(0) else near[0]
+
+
 def root_enclosure(p: fmpz_poly, index: int) -> Enclosure:
     """The index-th real root of an integer polynomial, at any precision."""
     known: dict[int, arb] = {}

@@ -41,7 +41,7 @@ def solve(equations: Sequence[Poly]) -> list[Base]:
             free = [k for k in ring.params_in(e.num) if k not in base.values]
             if not free:
                 continue
-            bound = {k for s in base.tower.gens for k in ring.params_in(s.modulus)}
+            bound = _bound(base)
             choices = [k for k in free if k not in bound]
             if not choices:
                 # only parameters that earlier steps depend on: go down by the norm first
@@ -51,6 +51,14 @@ def solve(equations: Sequence[Poly]) -> list[Base]:
             out += _solved_for(e, base, choices)
         bases = out
     return bases
+
+
+def _bound(base: Base) -> set[int]:
+    """Free parameters that the base already speaks of."""
+    elements = (*base.values.values(), *base.leads)
+    polys = [s.modulus for s in base.tower.gens]
+    polys += [e.num for e in elements] + [e.den for e in elements]
+    return {k for p in polys for k in ring.params_in(p)}
 
 
 def plug(p: Poly, base: Base) -> Element:

@@ -62,8 +62,8 @@ class Case:
         if time.monotonic() > self.deadline:
             raise OutOfTime
 
-    def survey(self, statements: Sequence[Statement], closed: bool) -> Survey:
-        """Survey all admitted figures for some statements."""
+    def survey(self, statements: Sequence[Statement], closed: bool, shallow: bool = False) -> Survey:
+        """Survey all admitted figures (or open cells only) for some statements."""
         conditions: list[Condition] = [line.body for line in self.sheet.provided]  # type: ignore[misc]
         return Surveyor(
             self.program,
@@ -73,6 +73,7 @@ class Case:
             closed=closed,
             open_conditions=all(is_open(c) for c in conditions),
             progress=self.progress,
+            shallow=shallow,
         ).run()
 
     def words(self, found: Survey, claim: Condition) -> Lexicon:
@@ -147,9 +148,11 @@ def _guessed(
     whole = (1 << len(pts)) - 1
     lits = lexicon.literals(pts, what)
     plain = [x for x in lits if not in_frame(x.condition)]
-    guess = name(target, whole, plain)
+    full = max(p.dimension for p, _ in pool)
+    short = full - max((p.dimension for p, t in pool if t), default=full)
+    guess = name(target, whole, plain, short)
     if guess is None and with_frame:
-        guess = name(target, whole, lits)
+        guess = name(target, whole, lits, short)
     return guess
 
 
@@ -286,16 +289,13 @@ def _explained(
     if out.verdict is not Verdict.HOLDS and len(parts) == 1 and isinstance(claim, Comparison):
         forms = _signed_forms(claim)
     if forms:
-        first = case.survey([statement(c) for c in (*whats, *forms)], closed=False)
-        full = max(p.dimension for p in first.places)
-        keep = [
-            i
-            for i in range(len(whats) + len(forms))
-            if i < len(whats) or any(p.truths[i] for p in first.places if p.dimension == full)
-        ]
-        found = _only(first, keep)
-        forms = [forms[i - len(whats)] for i in keep[len(whats) :]]
+        first = case.survey([statement(c) for c in forms], closed=False, shallow=True)
+        full = max((p.dimension for p in first.places), default=0)
+        top = [p for p in first.places if p.dimension == full]
+        forms = [c for i, c in enumerate(forms) if any(p.truths[i] for p in top)]
+    if forms:
         whats = [*whats, *forms]
+        found = case.survey([statement(c) for c in whats], closed=False)
     n = len(whats) - len(forms)
     said_ = _where(case, whats, found, n)
     where, exact_ = [w for w, _, _ in said_], [e for _, e, _ in said_]

@@ -18,6 +18,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
+from typing import Any
 
 from ..field import cells, ring
 from ..field.near import (
@@ -25,6 +26,7 @@ from ..field.near import (
     Enclosure,
     NearBranch,
     cover_zeros,
+    crossing_box,
     exactly,
     fixed,
     follow,
@@ -123,6 +125,7 @@ def lift(
     comp: Component,
     register: Register,
     curves: Sequence[Poly],
+    exact: Sequence[Poly],
     order: Sequence[int],
     conditions: Sequence[Statement],
     statements: Sequence[Statement],
@@ -130,7 +133,7 @@ def lift(
 ) -> tuple[list[Lifted], list[tuple[Poly, ...]], bool]:
     """Judge arcs and critical points of the given curves.  Besides the points: the systems of
     equations whose points stayed unsettled, and whether all arcs were settled."""
-    plan = _plan(comp, register, curves, order, tick)
+    plan = _plan(comp, register, curves, exact, order, tick)
     out: list[Lifted] = []
     open_: list[tuple[Poly, ...]] = []
     complete = True
@@ -196,22 +199,35 @@ class Plan:
     figure: tuple[str, ...]
     upper: tuple[Poly, ...]
     below: tuple[Poly, ...]
+    crossings: dict[tuple[str, str], tuple[Poly, ...]]
 
 
 def _plan(
-    comp: Component, register: Register, curves: Sequence[Poly], order: Sequence[int], tick: Callable[[], None]
+    comp: Component,
+    register: Register,
+    curves: Sequence[Poly],
+    exact: Sequence[Poly],
+    order: Sequence[int],
+    tick: Callable[[], None],
 ) -> Plan:
     u, v = order
     slot = ring.param_slot(v)
     everything = list(register.polys.values())
     below: dict[str, Poly] = {}
+    crossings: dict[tuple[str, str], tuple[Poly, ...]] = {}
+    strata = {ring.key(p) for p in exact}
 
-    def put(p: Poly) -> None:
+    def put(p: Poly) -> list[str]:
+        """Enter the factors; returns those of multiplicity one."""
         if p.is_zero() or ring.is_constant(p):
-            return
-        for f, _ in ring.irreducible_factors(p):
+            return []
+        simple = []
+        for f, m in ring.irreducible_factors(p):
             if not cells.never_zero(f, comp.positive):
                 below[ring.key(f)] = f
+                if m == 1:
+                    simple.append(ring.key(f))
+        return simple
 
     upper = [p for p in everything if p.degrees()[slot] > 0]
     for p in everything:
@@ -226,9 +242,13 @@ def _plan(
             put(cs[0])
         for p in upper:
             if p is not g and p != g:
-                put(p.resultant(g, ring.PARAM_NAMES[v]))
+                once = put(p.resultant(g, ring.PARAM_NAMES[v]))
+                if ring.key(p) in strata:
+                    for name in once:
+                        pair = name, ring.key(g)
+                        crossings[pair] = (*crossings.get(pair, ()), p)
     figure = tuple(register.of(["figure"]))
-    return Plan(u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()))
+    return Plan(u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()), crossings)
 
 
 def _arcs(plan: Plan) -> Iterator[Point]:
@@ -269,8 +289,22 @@ def _critical(plan: Plan, h: Poly, width: int) -> Iterator[Point]:
         at = root_enclosure(line, i)
         for g in plan.curves:
             p = _reduced(g, h, vslot, v in plan.positive)
-            for box in cover_zeros(p, vslot, u, at, v in plan.positive, width):
-                yield 0, {u: at, v: fixed(box)}, ()
+            boxes = cover_zeros(p, vslot, u, at, v in plan.positive, width)
+            met = plan.crossings.get((ring.key(h), ring.key(g)), ())
+            spoken = {_crossing(g, q, boxes, plan, at, width) for q in met}
+            for k, box in enumerate(boxes):
+                if k not in spoken:
+                    yield 0, {u: at, v: fixed(box)}, ()
+
+
+def _crossing(g: Poly, q: Poly, boxes: list[Any], plan: Plan, at: Enclosure, width: int) -> int | None:
+    """The box whose only point of g is its crossing with q, a border examined by itself.
+
+    Lemma: a root alpha of multiplicity one of the resultant of g and q belongs to exactly one
+    common root, which is real with alpha.  If q can vanish in one box of g only, the common
+    root is there; if moreover g is monotone in v on that box, it is g's only zero in it.
+    """
+    return crossing_box(g, q, boxes, {plan.u: at}, plan.v, width)
 
 
 def _reduced(g: Poly, h: Poly, vslot: int, positive: bool) -> Poly:

@@ -21,7 +21,7 @@ from ..figure.program import Program, Run
 from .lift import heavy, lift
 from .spot import Register, Spot, Undefined
 
-EXACT_DEGREE = 8
+EXACT_SIZE = 40
 
 Statement = Callable[[Judge], bool]
 
@@ -59,7 +59,8 @@ class Survey:
 
 @dataclass
 class Surveyor:
-    """Surveys one figure for one list of statements."""
+    """Surveys one figure for one list of statements; a `shallow` survey looks at open cells
+    only and leaves their borders out."""
 
     program: Program
     conditions: Sequence[Statement]
@@ -67,6 +68,7 @@ class Surveyor:
     deadline: float
     closed: bool = False
     open_conditions: bool = True
+    shallow: bool = False
     progress: Callable[[str], None] = lambda text: None
     result: Survey = field(default_factory=Survey)
     seen: set[tuple[frozenset[str], frozenset[int]]] = field(default_factory=set)
@@ -110,23 +112,28 @@ class Surveyor:
             found = self.result.places[before:]
             if depth == 0 and found:
                 self.result.borders.update(register.polys)
-            curves = []
+            if self.shallow:
+                continue
+            curves: list[Poly] = []
+            exact: list[Poly] = list(register.of(["figure"]).values())
             for n, p in self._matters(register, found).items():
                 if "figure" not in register.kinds[n] and heavy(p, comp):
                     curves.append(p)
                     continue
+                exact.append(p)
                 old = todo.get(n)
                 todo[n] = (p, max(len(comp.free) - 1, old[1] if old else 0))
             if curves:
-                points += self._lift(comp, register, curves, depth)
+                points += self._lift(comp, register, curves, exact, depth)
         done = list(excluded)
         for _, (p, top) in sorted(todo.items(), key=lambda item: (len(item[1][0]), item[0])):
             self.progress(f"{self.result.strata} strata, {self.result.cells} cells")
             self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling))
             done.append(p)
         for system in points:
-            if system[-1].total_degree() > EXACT_DEGREE:
-                self.result.not_examined.append(f"points of degree {system[-1].total_degree()}")
+            size = system[0].total_degree() * system[-1].total_degree()
+            if size > EXACT_SIZE:
+                self.result.not_examined.append("critical points of a border curve")
                 continue
             self._stratum([*eqs, *system], missed, list(excluded), depth + 2)
         bound = {k for p in eqs for k in ring.params_in(p)}
@@ -136,12 +143,13 @@ class Surveyor:
                 self._stratum(list(eqs), missed | {step}, list(excluded), depth, ceiling)
 
     def _lift(
-        self, comp: Component, register: Register, curves: list[Poly], depth: int
+        self, comp: Component, register: Register, curves: list[Poly], exact: list[Poly], depth: int
     ) -> list[tuple[Poly, ...]]:
-        """Examine curves of high degree in balls; returns the points left, as equations."""
+        """Examine curves of high degree in balls, `exact` borders being strata of their own;
+        returns the points left, as equations."""
         order = self._order(comp, register)
         found, left, complete = lift(
-            comp, register, curves, order, self.conditions, self.statements, self.tick
+            comp, register, curves, exact, order, self.conditions, self.statements, self.tick
         )
         self.result.places += [
             Place(x.dimension, comp, x.branch, x.truths, depth + 2 - x.dimension)  # type: ignore[arg-type]

@@ -84,8 +84,16 @@ def _negative(c: Candidate, mask: int) -> Literal:
     return Literal(Not(c.condition), mask, c.cost + extra)
 
 
-def name(target: int, whole: int, lits: Sequence[Literal]) -> Condition | None:
-    """The cheapest condition found that is true exactly on the target places, or None."""
+def name(target: int, whole: int, lits: Sequence[Literal], codimension: int = 0) -> Condition | None:
+    """The cheapest condition found that is true exactly on the target places, or None.
+
+    `codimension` says how many dimensions the target falls short of all figures: a conjunction
+    of fewer equations cannot be right, though no place seen may show it.
+    """
+    if codimension:
+        thin = _thin(target, whole, lits, codimension)
+        if thin is not None:
+            return thin.condition
     best = _all(target, whole, lits)
     for found in (_any(target, lits), _cover(target, whole, lits)):
         if found is not None and (best is None or found.cost < best.cost):
@@ -121,6 +129,42 @@ def _all(target: int, whole: int, lits: Sequence[Literal]) -> Literal | None:
     if parts is None:
         return None
     return Literal(all_of([p.condition for p in parts]), target, _cost(parts))
+
+
+def equations_in(c: Condition) -> int:
+    """How many equations a condition amounts to at least."""
+    if isinstance(c, And):
+        return sum(equations_in(x) for x in c.args)
+    if isinstance(c, Or):
+        return min(equations_in(x) for x in c.args)
+    if isinstance(c, Not):
+        return 2 if isinstance(c.arg, Relation) and c.arg.form == "distinct" else 0
+    if isinstance(c, Comparison):
+        return int(c.ops[0] == "=")
+    return int(c.args[-1] in ("right", "="))
+
+
+def _thin(target: int, whole: int, lits: Sequence[Literal], codimension: int) -> Literal | None:
+    """Cheapest conjunction with enough equations, or (for several thin pieces) a disjunction."""
+    off = whole & ~target
+    over = [x for x in lits if x.mask & target == target]
+    exact = [x for x in over if equations_in(x.condition)][:14]
+    best: Literal | None = None
+    for n in (1, 2, 3):
+        for some in combinations(exact, n):
+            if sum(equations_in(x.condition) for x in some) < codimension:
+                continue
+            left = off
+            for x in some:
+                left &= x.mask
+            rest = [Literal(x.condition, left & ~x.mask, x.cost) for x in over if x not in some]
+            more = _cheapest_cover(left, rest) if left else []
+            if more is None:
+                continue
+            cost = _cost(some) + sum(m.cost + 0.1 for m in more)
+            if best is None or cost < best.cost:
+                best = Literal(all_of([x.condition for x in (*some, *more)]), target, cost)
+    return best
 
 
 def _any(target: int, lits: Sequence[Literal]) -> Literal | None:
