@@ -134,7 +134,8 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None) -> list
             out += run_limited(_decide_all, one, seconds or 60.0, seconds=hard, mebibytes=mebibytes)
         except LimitReached as e:
             text = show(line.body)
-            out.append(Decision(sheet.file, sheet.title, text, Verdict.UNDECIDED, reason=str(e)))
+            why = f"{e} ({seconds:g} s)" if seconds is not None and "time" in str(e) else str(e)
+            out.append(Decision(sheet.file, sheet.title, text, Verdict.UNDECIDED, reason=why))
     return out
 
 

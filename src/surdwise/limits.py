@@ -2,12 +2,14 @@
 
 from __future__ import annotations
 
+import os
 import resource
 from collections.abc import Callable
 from concurrent.futures import TimeoutError as OutOfWait
 from typing import Any
 
 MIB = 1 << 20
+GRACE = 0.2  # seconds between asking a worker to stop and killing it
 
 
 class LimitReached(Exception):
@@ -24,8 +26,9 @@ def run_limited(
     """
     from multiprocessing import get_context
 
-    from pebble import ProcessExpired, ProcessPool
+    from pebble import CONSTS, ProcessExpired, ProcessPool
 
+    CONSTS.term_timeout = GRACE
     setup = [mebibytes] if mebibytes is not None else []
     with ProcessPool(
         max_workers=1,
@@ -37,7 +40,7 @@ def run_limited(
         try:
             return future.result()
         except OutOfWait as e:
-            raise LimitReached(f"the time limit of {seconds:g} s was reached") from e
+            raise LimitReached("the time limit was reached") from e
         except (ProcessExpired, MemoryError) as e:
             if mebibytes is None:
                 raise LimitReached("the worker process died") from e
@@ -45,7 +48,8 @@ def run_limited(
 
 
 def _confine(mebibytes: int) -> None:
-    """Cap the address space of this process; core files are not wanted."""
+    """Cap the address space of this process, silently: no core files, no last words."""
+    os.dup2(os.open(os.devnull, os.O_WRONLY), 2)
     resource.setrlimit(resource.RLIMIT_CORE, (0, 0))
     with open("/proc/self/statm", encoding="ascii") as f:
         used = int(f.read().split()[0]) * resource.getpagesize()

@@ -100,7 +100,12 @@ def _betweens(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candida
     for tri in straight:
         for c in tri:
             a, b = (x for x in tri if x != c)
-            yield Candidate(Relation("between", (Pt(c), Pt(a), Pt(b))), 1.0)
+            inner = Relation("between", (Pt(c), Pt(a), Pt(b)))
+            yield Candidate(inner, 1.0)
+            ends = [Not(Relation("distinct", ((Pt(x), Pt(c)),))) for x in (a, b)]
+            yield Candidate(Or((inner, *ends)), 1.35)
+            for end in ends:
+                yield Candidate(Or((inner, end)), 1.25)
 
 
 def _sides(
@@ -113,8 +118,10 @@ def _sides(
         for p, q in combinations(rest, 2):
             if any(tuple(sorted((a.name, b.name, x.name))) in straight for x in (p, q)):
                 continue
-            yield Candidate(Relation("same_side", (p, q, line)), 1.1 + extra)
-            yield Candidate(Relation("opposite_sides", (p, q, line)), 1.1 + extra)
+            in_row = any(tuple(sorted((p.name, q.name, x.name))) in straight for x in (a, b))
+            cost = 1.1 + extra + (2.2 if in_row else 0.0)
+            yield Candidate(Relation("same_side", (p, q, line)), cost)
+            yield Candidate(Relation("opposite_sides", (p, q, line)), cost)
 
 
 def _angles(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]) -> Iterator[Candidate]:

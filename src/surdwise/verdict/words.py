@@ -80,8 +80,8 @@ def _guess(c: Condition, hint: Hint) -> bool | None:
 def _negative(c: Candidate, mask: int) -> Literal:
     """The negation; `not A, B distinct` says that two points coincide and costs no more."""
     form = c.condition.form if isinstance(c.condition, Relation) else ""
-    extra = -0.15 if form == "distinct" else NEGATION
-    return Literal(Not(c.condition), mask, c.cost + extra)
+    extra = -0.15 if form == "distinct" else 1.0 if isinstance(c.condition, Or) else NEGATION
+    return Literal(_deny(c.condition), mask, c.cost + extra)
 
 
 def name(target: int, whole: int, lits: Sequence[Literal], codimension: int = 0) -> Condition | None:
