@@ -8,7 +8,7 @@ from __future__ import annotations
 
 import os
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, field, replace
 from pathlib import Path
 from statistics import median
 
@@ -19,7 +19,7 @@ from .thesis.formal import Thesis, thesis
 from .thesis.formulations import Formulation, formulate
 from .thesis.parts import Form
 from .verdict.decide import decide_claim
-from .verdict.outcome import Decision
+from .verdict.outcome import Decision, Variant
 from .verdict.repair import repaired
 
 
@@ -53,6 +53,13 @@ class Rewriting:
     thesis: Thesis | None
     formulations: tuple[Formulation, ...]
     why_not: str = ""
+    statuses: dict[str, str] = field(default_factory=dict)
+    variants: tuple[Variant, ...] = ()
+
+    def foreign(self, form: Form) -> tuple[Variant, ...]:
+        """Signed forms other than the claim that the formulation cannot tell from it, each with
+        a real figure."""
+        return tuple(v for v in self.variants if not v.as_written and form.value in v.admitted_by)
 
     def export(self, form: Form, to: str = "text") -> str:
         """One formulation as text, latex, sympy or singular."""
@@ -64,9 +71,19 @@ class Rewriting:
         return [] if self.thesis is None else legend(self.thesis)
 
 
-def rewrite(sheet: Sheet, forms: Sequence[Form] = tuple(Form)) -> tuple[Rewriting, ...]:
-    """Every claim of a sheet rewritten free of roots."""
-    return tuple(_rewritten(sheet, line, forms) for line in sheet.claims)
+def rewrite(
+    sheet: Sheet, forms: Sequence[Form] = tuple(Form), *, decided: bool = False, time_limit: float = 60.0
+) -> tuple[Rewriting, ...]:
+    """Every claim of a sheet rewritten free of roots.  With `decided` the figure is decided too,
+    and every formulation's algebraic status and foreign solutions are added."""
+    out = []
+    for line in sheet.claims:
+        r = _rewritten(sheet, line, forms)
+        if decided and r.thesis is not None:
+            d = decide_claim(sheet, line, time_limit)
+            r = replace(r, statuses=d.algebraic, variants=d.variants)
+        out.append(r)
+    return tuple(out)
 
 
 def _rewritten(sheet: Sheet, line: Line, forms: Sequence[Form]) -> Rewriting:

@@ -163,7 +163,7 @@ def rewrite(
     script = to in ("sympy", "singular")
     mark = {"sympy": "# ", "singular": "// ", "latex": "% ", "text": ""}[to]
     for s in _read(sheet):
-        for r in work(s, forms):
+        for r in work(s, forms, decided=form is None and to == "text"):
             print(f"{mark}claim {r.claim}")
             if r.thesis is None:
                 print(f"{mark}not rewritten: {r.why_not}")
@@ -174,10 +174,30 @@ def rewrite(
                 print(f"\n{mark}{f.form.value.replace('_', ' ')}" if script or to == "latex" else f"\n{f.form.value}:")
                 print(r.export(f.form, to))
             if form is None and to == "text":
-                head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds"]
-                rows = [_cost_row(f.form.value, f, f.seconds) for f in r.formulations]
+                head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds", "status"]
+                rows = [
+                    [*_cost_row(f.form.value, f, f.seconds), r.statuses.get(f.form.value, "")]
+                    for f in r.formulations
+                ]
                 print("\n" + table(head, rows))
+                _print_foreign(r)
             print()
+
+
+def _print_foreign(r: object) -> None:
+    """The signed forms that a formulation lets in besides the claim, each with a figure."""
+    from .api import Rewriting
+    from .printing import points_text
+
+    assert isinstance(r, Rewriting)
+    for v in r.variants:
+        if v.as_written or not v.admitted_by:
+            continue
+        names = ", ".join(n.replace("_", " ") for n in v.admitted_by)
+        where = f" where {v.condition}" if v.condition else ""
+        print(f"\nforeign: {v.claim}{where}\n  let in by {names}")
+        if v.holds_at is not None:
+            print(f"  for example {points_text(v.holds_at)}")
 
 
 def _cost_row(name: str, f: object, seconds: float) -> list[str]:

@@ -22,7 +22,14 @@ def decision_object(d: Decision) -> dict[str, Any]:
             {"degree": c.degree, "status": c.status, "signs": c.signs, "real": c.real} for c in d.components
         ],
         "variants": [
-            {"claim": v.claim, "condition": v.condition, "exact": v.exact, "holds_at": _figure(v.holds_at)}
+            {
+                "claim": v.claim,
+                "condition": v.condition,
+                "exact": v.exact,
+                "as_written": v.as_written,
+                "admitted_by": list(v.admitted_by),
+                "holds_at": _figure(v.holds_at),
+            }
             for v in d.variants
         ],
         "links": [

@@ -45,12 +45,14 @@ def decision_text(d: Decision, colour: bool) -> str:
         same = f"; equality {x.equality}" if x.equality else ""
         row("link", f"{x.claim}: {x.verdict.value}{tail}{same}")
     for v in d.variants:
+        if v.as_written:
+            continue
         where = f"where {v.condition}" if v.condition else "on a region without a short name"
         row("variant", f"{v.claim}, {where}" + ("" if v.exact else " (and on a thin set besides)"))
     if d.holds_at is not None and d.verdict is not Verdict.HOLDS:
-        row("true at", _points(d.holds_at))
+        row("true at", points_text(d.holds_at))
     if d.fails_at is not None:
-        row("false at", _points(d.fails_at))
+        row("false at", points_text(d.fails_at))
     for w in d.degenerate:
         row("degenerate", w)
     if d.algebraic:
@@ -68,7 +70,8 @@ def _only(condition: str | None) -> str:
     return f"only when {condition}" if condition else "at most on a thin set"
 
 
-def _points(f: Figure) -> str:
+def points_text(f: Figure) -> str:
+    """A witness figure on one line."""
     return ", ".join(f"{n} = ({p.exact[0]}, {p.exact[1]})" for n, p in f.items())
 
 

@@ -9,7 +9,7 @@ from ..field.real import Unsettled
 from ..field.tower import Element
 from ..figure.component import Component
 from ..sheet.tree import Comparison, Relation
-from ..thesis.parts import Part, Status, parts, statuses
+from ..thesis.parts import Form, Part, Status, parts, statuses
 from .outcome import ComponentReport
 from .survey import Place
 
@@ -24,6 +24,12 @@ class AlgebraicSide:
     components: tuple[ComponentReport, ...]
     total: int
     true: int
+    minimal_on: frozenset[int]
+
+    def admitting(self, comps: set[int]) -> tuple[str, ...]:
+        """Formulations that vanish on all of the given components' figures (by identity)."""
+        whole = [f.value for f in Form if f is not Form.MINIMAL]
+        return tuple(whole + ([Form.MINIMAL.value] if comps & self.minimal_on else []))
 
 
 def algebraic_side(
@@ -49,7 +55,8 @@ def algebraic_side(
             status = Status.TRUE if part.true else Status.FALSE
             reports.append(ComponentReport(part.degree, status.value, part.signs, r))
     named = {k: v.value for k, v in statuses(found, minimal).items()}
-    return AlgebraicSide(named, tuple(reports[:LISTED]), len(found), sum(p.true for p in found))
+    on = frozenset(id(p.comp) for p in minimal if p.true)
+    return AlgebraicSide(named, tuple(reports[:LISTED]), len(found), sum(p.true for p in found), on)
 
 
 def _literal(part: Part, place: Place) -> bool:

@@ -16,7 +16,7 @@ from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
 from ..figure.program import Program, program
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
-from .algebraic import algebraic_side, dominant
+from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .candidates import Candidate, candidates
 from .explain import explain
 from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
@@ -260,16 +260,16 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     if verdict is Verdict.EMPTY:
         return replace(out, reason=_why_empty(case, found))
     out = replace(out, holds_at=witness(found.places, 0, True), fails_at=witness(found.places, 0, False))
-    total = true = 0
+    side: AlgebraicSide | None = None
     if is_equality(claim):
         assert isinstance(claim, (Comparison, Relation))
         side = algebraic_side(dominant(found.components), claim, found.places, case.tick)
         out = replace(out, algebraic=side.statuses, components=side.components)
-        total, true = side.total, side.true
     try:
-        out = _explained(case, whats, parts, found, out)
+        out = _explained(case, whats, parts, found, out, side)
     except OutOfTime:
         out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")
+    total, true = (side.total, side.true) if side is not None else (0, 0)
     return replace(out, explanation=explain(out, total, true))
 
 
@@ -281,18 +281,26 @@ def is_equality(c: Condition) -> bool:
 
 
 def _explained(
-    case: Case, whats: list[Condition], parts: Sequence[Condition], found: Survey, out: Decision
+    case: Case,
+    whats: list[Condition],
+    parts: Sequence[Condition],
+    found: Survey,
+    out: Decision,
+    side: AlgebraicSide | None,
 ) -> Decision:
     """The decision with its side condition, equality cases, links and variants."""
     claim = whats[0]
     forms: list[Condition] = []
+    written = -1
     if out.verdict is not Verdict.HOLDS and len(parts) == 1 and isinstance(claim, Comparison):
         forms = _signed_forms(claim)
     if forms:
         first = case.survey([statement(c) for c in forms], closed=False, shallow=True)
         full = max((p.dimension for p in first.places), default=0)
         top = [p for p in first.places if p.dimension == full]
-        forms = [c for i, c in enumerate(forms) if any(p.truths[i] for p in top)]
+        keep = [i for i in range(len(forms)) if any(p.truths[i] for p in top)]
+        written = keep.index(0) if 0 in keep else -1
+        forms = [forms[i] for i in keep]
     if forms:
         whats = [*whats, *forms]
         found = case.survey([statement(c) for c in whats], closed=False)
@@ -324,11 +332,20 @@ def _explained(
                 )
             )
         out = replace(out, links=tuple(links))
-    variants = tuple(
-        Variant(show(c), where[n + i], exact_[n + i], witness(found.places, n + i, True))
-        for i, c in enumerate(forms)
-    )
-    return replace(out, variants=variants)
+    variants = []
+    for i, c in enumerate(forms):
+        comps = {id(p.comp) for p in found.places if p.truths[n + i]}
+        variants.append(
+            Variant(
+                show(c),
+                where[n + i],
+                exact_[n + i],
+                witness(found.places, n + i, True),
+                i == written,
+                () if side is None else side.admitting(comps),
+            )
+        )
+    return replace(out, variants=tuple(variants))
 
 
 def _only(s: Survey, keep: Sequence[int]) -> Survey:

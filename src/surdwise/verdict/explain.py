@@ -9,7 +9,7 @@ def explain(d: Decision, total: int, true: int) -> str:
     """Why the algebraic status differs from the literal one, which signs are to blame, what the
     naive squared form would have let in, and what the text should say."""
     out = [_opening(d, total, true)]
-    others = [v for v in d.variants if v.claim != _as_variant(d)]
+    others = [v for v in d.variants if not v.as_written]
     if d.algebraic and d.verdict is not Verdict.HOLDS and others:
         listed = "; ".join(f"`{v.claim}`" + (f" where {v.condition}" if v.condition else "") for v in others[:4])
         more = f" and {len(others) - 4} more" if len(others) > 4 else ""
@@ -18,10 +18,6 @@ def explain(d: Decision, total: int, true: int) -> str:
         out.append("Squaring both sides once does not separate them: it lets these forms in as well.")
     out.append(_advice(d))
     return " ".join(x for x in out if x)
-
-
-def _as_variant(d: Decision) -> str:
-    return next((v.claim for v in d.variants if v.condition == d.condition and v.exact), d.claim)
 
 
 def _opening(d: Decision, total: int, true: int) -> str:

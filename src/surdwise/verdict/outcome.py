@@ -45,12 +45,18 @@ class ComponentReport:
 
 @dataclass(frozen=True)
 class Variant:
-    """A signed form of the claim that holds on a set of full dimension, and where."""
+    """A signed form of the claim that holds on a set of full dimension, and where.
+
+    `as_written` marks the claim itself; `admitted_by` names the formulations that cannot tell
+    the form from the claim: for them it is a foreign solution, `holds_at` a real figure of it.
+    """
 
     claim: str
     condition: str | None
     exact: bool
     holds_at: Figure | None
+    as_written: bool
+    admitted_by: tuple[str, ...]
 
 
 @dataclass(frozen=True)
