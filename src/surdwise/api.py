@@ -12,7 +12,8 @@ from dataclasses import dataclass, field, replace
 from pathlib import Path
 from statistics import median
 
-from .sheet import Sheet, read_file, read_text, show
+from .figure.program import frames_for
+from .sheet import Sheet, SurdwiseError, read_file, read_text, show
 from .sheet.tree import Comparison, Line
 from .thesis.export import EXPORTS, legend
 from .thesis.formal import Thesis, thesis
@@ -34,10 +35,21 @@ def read(source: str | os.PathLike[str]) -> tuple[Sheet, ...]:
 
 
 def decide(
-    sheet: Sheet, *, time_limit: float = 60.0, progress: Callable[[str], None] = lambda text: None
+    sheet: Sheet,
+    *,
+    time_limit: float = 60.0,
+    progress: Callable[[str], None] = lambda text: None,
+    frame: str | None = None,
 ) -> tuple[Decision, ...]:
-    """Decide every claim of a sheet; `time_limit` is in seconds for each claim."""
-    return tuple(decide_claim(sheet, line, time_limit, progress) for line in sheet.claims)
+    """Decide every claim of a sheet; `time_limit` is in seconds for each claim, `frame` one of
+    `frames_for(sheet)` or None for the cheapest."""
+    if frame is not None and frame not in frames_for(sheet):
+        raise FrameError(f"expected one of {', '.join(frames_for(sheet))} as frame, got {frame}")
+    return tuple(decide_claim(sheet, line, time_limit, progress, frame) for line in sheet.claims)
+
+
+class FrameError(SurdwiseError):
+    """A frame that cannot hold the sheet."""
 
 
 def repair(sheet: Sheet, decisions: Sequence[Decision]) -> str:

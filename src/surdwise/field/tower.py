@@ -30,7 +30,8 @@ class Gen:
     `modulus` is monic in g_index over the ring below.  `radicand` is set for square roots
     (modulus g^2 - radicand).  With `choice` "positive" the generator stands for the real
     root whose sign is that of `orient` (a polynomial in the parameters); with "either" every
-    real root of the modulus is meant.
+    real root of the modulus is meant.  In both cases `orient` holds the square factors taken out
+    of the radicand: at its zeros the figure may be real though the radicand left is negative.
     """
 
     index: int
@@ -115,9 +116,8 @@ class Tower:
             s, rest = ring.split_square(whole)
         k = len(self.gens)
         g = ring.gen(k)
+        # where s vanishes the radicand does, whatever the sign of the rest: a place of its own
         orient = s * radicand.den
-        if choice == "either":
-            orient = ONE
         step = Gen(k, g * g - rest, 2, rest, choice, orient, label)
         tower = self._extended(step)
         return tower, tower.element(s * g, radicand.den)

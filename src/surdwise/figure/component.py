@@ -102,6 +102,7 @@ class Frame:
     """
 
     keeps_scale: bool
+    kind: str = "cartesian"
     slots: dict[tuple[int, int], int] = field(default_factory=dict)
     labels: dict[int, str] = field(default_factory=dict)
     whole: set[int] = field(default_factory=set)

@@ -116,9 +116,19 @@ class Program:
         return Component(base.tower, base.values, (), requires=tuple(requires))
 
 
-def program(sheet: Sheet) -> Program:
-    """The program of a sheet."""
-    return Program(sheet.given, Frame(keeps_scale(sheet)))
+FRAMES = ("cartesian", "sides")
+
+
+def frames_for(sheet: Sheet) -> list[str]:
+    """The frames that can hold a sheet: side lengths need a free triangle placed first."""
+    first = sheet.given[0].body if sheet.given else None
+    free = isinstance(first, Fact) and first.form == "triangle"
+    return ["cartesian", "sides"] if free else ["cartesian"]
+
+
+def program(sheet: Sheet, kind: str = "cartesian") -> Program:
+    """The program of a sheet in a frame."""
+    return Program(sheet.given, Frame(keeps_scale(sheet), kind))
 
 
 def _action(line: Line) -> Callable[[Builder], None]:

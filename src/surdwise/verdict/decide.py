@@ -14,6 +14,7 @@ from ..field.tower import Element
 from ..figure.component import Component
 from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
 from ..figure.program import Program, program
+from .frames import cheapest_frame
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
 from .algebraic import AlgebraicSide, algebraic_side, dominant
@@ -213,24 +214,21 @@ def _plainness(b: Branch) -> int:
     return 40 * len(b.path) + sum(len(str(v)) for v in b.values.values())
 
 
-def decide(
-    sheet: Sheet,
-    time_limit: float = 60.0,
-    progress: Callable[[str], None] = lambda text: None,
-) -> tuple[Decision, ...]:
-    """Decide every claim of a sheet; `time_limit` seconds for each claim."""
-    return tuple(decide_claim(sheet, line, time_limit, progress) for line in sheet.claims)
-
-
 def decide_claim(
-    sheet: Sheet, line: Line, time_limit: float, progress: Callable[[str], None] = lambda text: None
+    sheet: Sheet,
+    line: Line,
+    time_limit: float,
+    progress: Callable[[str], None] = lambda text: None,
+    frame: str | None = None,
 ) -> Decision:
-    """Decide one claim."""
+    """Decide one claim within a time limit in seconds; `frame` forces a frame, else the
+    cheapest of those that can hold the sheet is taken."""
     start = time.monotonic()
     claim: Condition = line.body  # type: ignore[assignment]
     blank = Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
     try:
-        case = Case(sheet, program(sheet), start + time_limit, progress)
+        kind = frame or cheapest_frame(sheet, claim)
+        case = Case(sheet, program(sheet, kind), start + time_limit, progress)
         out = _decided(case, claim, blank)
     except OutOfTime:
         out = replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
@@ -413,8 +411,11 @@ def _frame(prog: Program, found: Survey) -> str:
         for n, v in list(p.comp.points.items())[:3]:
             spots.append(f"{n} = ({_coordinate(v.x)}, {_coordinate(v.y)})")
         scale = "" if prog.frame.keeps_scale else ", up to similarity"
-        return "Cartesian: " + ", ".join(spots) + scale
-    return "Cartesian"
+        return FRAME_NAMES[prog.frame.kind] + ": " + ", ".join(spots) + scale
+    return FRAME_NAMES[prog.frame.kind]
+
+
+FRAME_NAMES = {"cartesian": "Cartesian", "sides": "side lengths"}
 
 
 def _coordinate(e: object) -> str:
