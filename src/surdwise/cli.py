@@ -28,6 +28,9 @@ Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default
 TimeLimit = Annotated[
     float | None, typer.Option("--time-limit", help="Seconds for each claim; the work is killed then.", min=0.01)
 ]
+FrameChoice = Annotated[
+    str | None, typer.Option("--frame", help="cartesian or sides; the cheapest that fits if not given.")
+]
 MemoryLimit = Annotated[int | None, typer.Option("--memory-limit", help="MiB for each sheet's work.", min=16)]
 
 
@@ -70,10 +73,10 @@ def _progress() -> Callable[[str], None]:
     return show
 
 
-def _decide_all(sheet: Sheet, soft: float) -> object:
+def _decide_all(sheet: Sheet, soft: float, frame: str | None) -> object:
     from .api import decide
 
-    return decide(sheet, time_limit=soft, progress=_progress())
+    return decide(sheet, time_limit=soft, progress=_progress(), frame=frame)
 
 
 @app.command()
@@ -83,6 +86,7 @@ def decide(
     repair: Annotated[
         Path | None, typer.Option("--repair", help="Write the sheet with its side conditions to this file.")
     ] = None,
+    frame: FrameChoice = None,
     time_limit: TimeLimit = None,
     memory_limit: MemoryLimit = None,
 ) -> None:
@@ -94,7 +98,7 @@ def decide(
     mended = []
     for path in sheets:
         for sheet in _read(path):
-            decisions = _decided(sheet, time_limit, memory_limit)
+            decisions = _decided(sheet, time_limit, memory_limit, frame)
             if sys.stderr.isatty():
                 print("\r\x1b[K", end="", file=sys.stderr)
             done += decisions
@@ -114,7 +118,7 @@ def decide(
     raise typer.Exit(worst([d.verdict for d in done]))
 
 
-def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None) -> list:  # type: ignore[type-arg]
+def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: str | None) -> list:  # type: ignore[type-arg]
     """Decisions of one sheet, in a killable process where limits are asked for."""
     from dataclasses import replace
 
@@ -123,7 +127,10 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None) -> list
     from .verdict.outcome import Decision, Verdict
 
     if seconds is None and mebibytes is None:
-        return list(work(sheet, progress=_progress()))
+        try:
+            return list(work(sheet, progress=_progress(), frame=frame))
+        except SurdwiseError as e:
+            _usage(str(e))
     from .limits import LimitReached, run_limited
 
     out = []
@@ -131,7 +138,9 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None) -> list
         one = replace(sheet, claims=(line,))
         hard = None if seconds is None else seconds + 0.5
         try:
-            out += run_limited(_decide_all, one, seconds or 60.0, seconds=hard, mebibytes=mebibytes)
+            out += run_limited(
+                _decide_all, one, seconds or 60.0, frame, seconds=hard, mebibytes=mebibytes
+            )
         except LimitReached as e:
             text = show(line.body)
             why = f"{e} ({seconds:g} s)" if seconds is not None and "time" in str(e) else str(e)

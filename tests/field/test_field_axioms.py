@@ -191,14 +191,14 @@ def test_roots_contents_and_coefficients_of_polynomials(p: Poly, q: Poly) -> Non
 
 
 def _fractions(bound: int) -> list[Fraction]:
-    return sorted({Fraction(a, b) for b in range(1, bound) for a in range(-3 * b, 3 * b + 1)})
+    return sorted({Fraction(a, b) for b in range(1, bound) for a in range(-2 * b, 2 * b + 1)})
 
 
 def test_simplest_between_is_minimal() -> None:
     """Against all fractions of small denominator: none strictly inside has a smaller denominator,
     and of those with the same denominator none is smaller in size."""
-    ends = _fractions(8)
-    pool = _fractions(40)
+    ends = _fractions(6)
+    pool = _fractions(24)
     for low, high in product(ends, ends):
         if low >= high:
             continue

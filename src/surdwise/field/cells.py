@@ -8,7 +8,7 @@ there, and every sample is rational.  Exact up to root isolation, which is certi
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Callable, Iterable, Iterator
 from itertools import combinations
 
 from flint import arb, fmpq, fmpz_poly
@@ -56,6 +56,7 @@ def open_cells(
     order: list[int],
     positive: frozenset[int],
     avoid: Iterable[Poly] = (),
+    known: Eliminations | None = None,
     limit: int = 200_000,
 ) -> Iterator[Sample]:
     """One rational sample in every open cell of the polynomials' complement.
@@ -64,7 +65,7 @@ def open_cells(
     (0, oo) only.  No sample is a zero of a polynomial of `avoid`, which bound no cell.  Raises
     TooManyCells past `limit` samples.
     """
-    levels = project(polys, order, positive)
+    levels = project(polys, order, positive, known if known is not None else Eliminations())
     count = 0
     for s in _lift(levels, order, positive, 0, {}, list(avoid)):
         count += 1
@@ -73,14 +74,36 @@ def open_cells(
         yield s
 
 
-def project(polys: Iterable[Poly], order: list[int], positive: frozenset[int]) -> list[list[Poly]]:
+class Eliminations:
+    """Discriminants and resultants of one component, factored, computed once."""
+
+    def __init__(self) -> None:
+        self._known: dict[tuple[str, str, int], list[tuple[Poly, int]]] = {}
+
+    def discriminant(self, p: Poly, k: int) -> list[tuple[Poly, int]]:
+        """Irreducible factors of the discriminant in parameter k, with multiplicities."""
+        return self._get((ring.key(p), "", k), lambda: p.discriminant(ring.PARAM_NAMES[k]))
+
+    def resultant(self, p: Poly, q: Poly, k: int) -> list[tuple[Poly, int]]:
+        """Irreducible factors of the resultant in parameter k, with multiplicities."""
+        a, b = sorted((ring.key(p), ring.key(q)))
+        return self._get((a, b, k), lambda: p.resultant(q, ring.PARAM_NAMES[k]))
+
+    def _get(self, name: tuple[str, str, int], make: Callable[[], Poly]) -> list[tuple[Poly, int]]:
+        if name not in self._known:
+            p = make()
+            self._known[name] = [] if p.is_zero() else ring.irreducible_factors(p)
+        return self._known[name]
+
+
+def project(
+    polys: Iterable[Poly], order: list[int], positive: frozenset[int], known: Eliminations
+) -> list[list[Poly]]:
     """Projection sets: levels[i] involves order[i] and only earlier parameters besides."""
     levels: list[dict[str, Poly]] = [{} for _ in order]
 
-    def put(p: Poly) -> None:
-        if p.is_zero() or ring.is_constant(p):
-            return
-        for f, _ in ring.irreducible_factors(p):
+    def enter(factors: Iterable[tuple[Poly, int]]) -> None:
+        for f, _ in factors:
             if never_zero(f, positive):
                 continue
             used = set(ring.params_in(f))
@@ -88,19 +111,20 @@ def project(polys: Iterable[Poly], order: list[int], positive: frozenset[int]) -
             levels[top][ring.key(f)] = f
 
     for p in polys:
-        put(p)
+        enter(ring.irreducible_factors(p))
     for i in range(len(order) - 1, 0, -1):
-        name = ring.PARAM_NAMES[order[i]]
-        slot = ring.param_slot(order[i])
+        k = order[i]
+        slot = ring.param_slot(k)
         here = list(levels[i].values())
         for p in here:
-            put(ring.coefficients(p, slot)[-1])
-            if p.degrees()[slot] > 1:
-                put(p.discriminant(name))
-            if order[i] in positive:
-                put(ring.coefficients(p, slot)[0])
+            cs = ring.coefficients(p, slot)
+            enter(ring.irreducible_factors(cs[-1]))
+            if len(cs) > 2:
+                enter(known.discriminant(p, k))
+            if k in positive and not cs[0].is_zero():
+                enter(ring.irreducible_factors(cs[0]))
         for p, q in combinations(here, 2):
-            put(p.resultant(q, name))
+            enter(known.resultant(p, q, k))
     return [list(level.values()) for level in levels]
 
 

@@ -12,6 +12,7 @@ from __future__ import annotations
 from collections.abc import Callable, Iterable
 from dataclasses import dataclass, field
 from fractions import Fraction
+from typing import Any
 
 from ..field import cells, ring, roots
 from ..field.ring import Poly
@@ -53,8 +54,8 @@ class _Fork(Exception):
 class Component:
     """One component of the figure so far.
 
-    `memo` keeps inverses and norms found while the finished component is read; a component
-    under construction has none, since its branches differ.
+    `memo`, `kept`, `eliminations`, `boxes` and `factors` keep what was found while the finished
+    component is read; a component under construction has none of it, since its branches differ.
     """
 
     tower: Tower
@@ -68,6 +69,8 @@ class Component:
     folded: frozenset[int] = frozenset()
     memo: dict[str, Element] = field(default_factory=dict)
     kept: dict[object, Element] = field(default_factory=dict)
+    eliminations: cells.Eliminations = field(default_factory=cells.Eliminations)
+    boxes: dict[object, list[Any]] = field(default_factory=dict)
     factors: dict[str, dict[str, Poly]] = field(default_factory=dict)
 
     def ground(self) -> Tower:

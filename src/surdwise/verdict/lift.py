@@ -16,7 +16,7 @@ on the whole arc or nowhere on it.
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from typing import Any
 
@@ -200,6 +200,7 @@ class Plan:
     upper: tuple[Poly, ...]
     below: tuple[Poly, ...]
     crossings: dict[tuple[str, str], tuple[Poly, ...]]
+    boxes: dict[object, list[Any]]
 
 
 def _plan(
@@ -217,38 +218,37 @@ def _plan(
     crossings: dict[tuple[str, str], tuple[Poly, ...]] = {}
     strata = {ring.key(p) for p in exact}
 
-    def put(p: Poly) -> list[str]:
+    def put(factors: Iterable[tuple[Poly, int]]) -> list[str]:
         """Enter the factors; returns those of multiplicity one."""
-        if p.is_zero() or ring.is_constant(p):
-            return []
         simple = []
-        for f, m in ring.irreducible_factors(p):
+        for f, m in factors:
             if not cells.never_zero(f, comp.positive):
                 below[ring.key(f)] = f
                 if m == 1:
                     simple.append(ring.key(f))
         return simple
 
+    known = comp.eliminations
     upper = [p for p in everything if p.degrees()[slot] > 0]
     for p in everything:
         if p.degrees()[slot] <= 0:
-            put(p)
+            put([(p, 1)])
     for g in curves:
         tick()
         cs = ring.coefficients(g, slot)
-        put(cs[-1])
-        put(g.discriminant(ring.PARAM_NAMES[v]))
-        if v in comp.positive:
-            put(cs[0])
+        put(ring.irreducible_factors(cs[-1]))
+        put(known.discriminant(g, v))
+        if v in comp.positive and not cs[0].is_zero():
+            put(ring.irreducible_factors(cs[0]))
         for p in upper:
             if p is not g and p != g:
-                once = put(p.resultant(g, ring.PARAM_NAMES[v]))
+                once = put(known.resultant(p, g, v))
                 if ring.key(p) in strata:
                     for name in once:
                         pair = name, ring.key(g)
                         crossings[pair] = (*crossings.get(pair, ()), p)
     figure = tuple(register.of(["figure"]))
-    return Plan(u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()), crossings)
+    return Plan(u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()), crossings, comp.boxes)
 
 
 def _arcs(plan: Plan) -> Iterator[Point]:
@@ -289,7 +289,10 @@ def _critical(plan: Plan, h: Poly, width: int) -> Iterator[Point]:
         at = root_enclosure(line, i)
         for g in plan.curves:
             p = _reduced(g, h, vslot, v in plan.positive)
-            boxes = cover_zeros(p, vslot, u, at, v in plan.positive, width)
+            name = ring.key(g), ring.key(h), i, v, width
+            if name not in plan.boxes:
+                plan.boxes[name] = cover_zeros(p, vslot, u, at, v in plan.positive, width)
+            boxes = plan.boxes[name]
             met = plan.crossings.get((ring.key(h), ring.key(g)), ())
             spoken = {_crossing(g, q, boxes, plan, at, width) for q in met}
             for k, box in enumerate(boxes):

@@ -185,7 +185,9 @@ class Surveyor:
             places: list[Place] = []
             loose = 0
             thin = list(register.of(["thin"]).values())
-            for sample in cells.open_cells(register.borders(), order, comp.positive, thin):
+            for sample in cells.open_cells(
+                register.borders(), order, comp.positive, thin, comp.eliminations
+            ):
                 self.tick()
                 self.result.cells += 1
                 try:
