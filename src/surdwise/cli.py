@@ -26,7 +26,8 @@ BAD_SHEET = 2
 
 Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default=False)]
 TimeLimit = Annotated[
-    float | None, typer.Option("--time-limit", help="Seconds for each claim; the work is killed then.", min=0.01)
+    float | None,
+    typer.Option("--time-limit", help="Seconds for each claim; the work is killed then.", min=0.01),
 ]
 FrameChoice = Annotated[
     str | None, typer.Option("--frame", help="cartesian or sides; the cheapest that fits if not given.")
@@ -138,9 +139,7 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: 
         one = replace(sheet, claims=(line,))
         hard = None if seconds is None else seconds + 0.5
         try:
-            out += run_limited(
-                _decide_all, one, seconds or 60.0, frame, seconds=hard, mebibytes=mebibytes
-            )
+            out += run_limited(_decide_all, one, seconds or 60.0, frame, seconds=hard, mebibytes=mebibytes)
         except LimitReached as e:
             text = show(line.body)
             why = f"{e} ({seconds:g} s)" if seconds is not None and "time" in str(e) else str(e)
@@ -153,7 +152,9 @@ def rewrite(
     sheet: Annotated[Path, typer.Argument(help="A claim sheet.", show_default=False)],
     form: Annotated[
         str | None,
-        typer.Option("--form", help="auxiliary, squared, sign_product, eliminant or minimal; all if not given."),
+        typer.Option(
+            "--form", help="auxiliary, squared, sign_product, eliminant or minimal; all if not given."
+        ),
     ] = None,
     to: Annotated[str, typer.Option("--to", help="text, latex, sympy or singular.")] = "text",
 ) -> None:
@@ -180,7 +181,11 @@ def rewrite(
             for text in r.legend():
                 print(mark + text)
             for f in r.formulations:
-                print(f"\n{mark}{f.form.value.replace('_', ' ')}" if script or to == "latex" else f"\n{f.form.value}:")
+                print(
+                    f"\n{mark}{f.form.value.replace('_', ' ')}"
+                    if script or to == "latex"
+                    else f"\n{f.form.value}:"
+                )
                 print(r.export(f.form, to))
             if form is None and to == "text":
                 head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds", "status"]

@@ -9,7 +9,7 @@ there, and every sample is rational.  Exact up to root isolation, which is certi
 from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Iterator
-from itertools import combinations
+from itertools import combinations, pairwise
 
 from flint import arb, fmpq, fmpz_poly
 
@@ -66,18 +66,18 @@ def open_cells(
     TooManyCells past `limit` samples.
     """
     levels = project(polys, order, positive, known if known is not None else Eliminations())
-    count = 0
-    for s in _lift(levels, order, positive, 0, {}, list(avoid)):
-        count += 1
-        if count > limit:
+    for count, s in enumerate(_lift(levels, order, positive, 0, {}, list(avoid))):
+        if count >= limit:
             raise TooManyCells(f"more than {limit} cells")
         yield s
 
 
 class Eliminations:
-    """Discriminants and resultants of one component, factored, computed once."""
+    """Discriminants and resultants of one component, factored, computed once; `tick` is called
+    between them, to stop when time is out."""
 
     def __init__(self) -> None:
+        self.tick: Callable[[], None] = lambda: None
         self._known: dict[tuple[str, str, int], list[tuple[Poly, int]]] = {}
 
     def discriminant(self, p: Poly, k: int) -> list[tuple[Poly, int]]:
@@ -90,6 +90,7 @@ class Eliminations:
         return self._get((a, b, k), lambda: p.resultant(q, ring.PARAM_NAMES[k]))
 
     def _get(self, name: tuple[str, str, int], make: Callable[[], Poly]) -> list[tuple[Poly, int]]:
+        self.tick()
         if name not in self._known:
             p = make()
             self._known[name] = [] if p.is_zero() else ring.irreducible_factors(p)
@@ -185,7 +186,7 @@ def gaps(polys: list[fmpz_poly], positive: bool) -> list[Gap]:
                 prec *= 2
                 continue
             roots = [r for r in roots if r > 0]
-        if all(a < b for a, b in zip(roots, roots[1:], strict=False)):
+        if all(a < b for a, b in pairwise(roots)):
             break
         prec *= 2
     low: Rational | None = fmpq(0) if positive else None

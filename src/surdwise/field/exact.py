@@ -151,5 +151,3 @@ def _which(f: Poly, slot: int, e: Element, branch: Branch) -> str | None:
             return f"CRootOf({body}, {near[0]})"
         prec *= 2
     return None
-
-

@@ -7,7 +7,9 @@ zero, and zero itself is only ever known algebraically (by the caller's exact ze
 
 from __future__ import annotations
 
-from flint import acb_poly, arb, ctx, fmpq, fmpz_poly
+import itertools
+
+from flint import acb, acb_poly, arb, ctx, fmpq, fmpz_poly
 
 from . import ring
 from .ring import Poly, Rational
@@ -203,7 +205,7 @@ def _real_roots(g: Gen, b: Branch, below: list[arb], prec: int) -> list[arb]:
             raise Unsettled("roots not separated from their conjugates")
         real.append(r.real)
     real.sort(key=lambda r: float(r.mid()))
-    if any(not (x < y) for x, y in zip(real, real[1:], strict=False)):
+    if any(not (x < y) for x, y in itertools.pairwise(real)):
         raise Unsettled("real roots not separated")
     return real
 
@@ -224,7 +226,8 @@ def _gcd(a: int, b: int) -> int:
 def isolate(p: fmpz_poly, prec: int = START_PREC) -> list[arb]:
     """Distinct real roots of an integer polynomial, ascending, as disjoint certified balls."""
     with ctx.workprec(prec):
-        roots = [r.real for r, _ in p.complex_roots() if r.imag.is_zero()]
+        pairs: list[tuple[acb, int]] = list(p.complex_roots())  # type: ignore[arg-type]
+        roots = [r.real for r, _ in pairs if r.imag.is_zero()]
     roots.sort(key=lambda r: r.mid())
     return roots
 

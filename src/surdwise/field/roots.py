@@ -87,8 +87,8 @@ def _sqrt(e: Element, k: int) -> Element | None:
     """Square root in the first k steps of e's tower."""
     t = e.tower
     if k == 0:
-        r = ring.square_root(e.num * e.den)
-        return None if r is None else t.element(r, e.den)
+        root = ring.square_root(e.num * e.den)
+        return None if root is None else t.element(root, e.den)
     g = t.gens[k - 1]
     if g.radicand is None:
         return _sqrt_by_factoring(e, k)
@@ -206,9 +206,9 @@ def _split_by_norm(f: ElementPoly, tower: Tower) -> list[ElementPoly]:
             for h, _ in facs:
                 back = tower.reduce(_compose(h, slot, x + shift))
                 cs = [tower.element(c) for c in ring.coefficients(back, slot)]
-                g = poly_gcd(rest, trim(cs))
-                out.append(g)
-                rest = poly_divmod(rest, g)[0]
+                part = poly_gcd(rest, trim(cs))
+                out.append(part)
+                rest = poly_divmod(rest, part)[0]
             return out
     raise ring.TooLarge("no shift makes the norm squarefree")
 

@@ -11,7 +11,6 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable
 from dataclasses import dataclass, field
-from fractions import Fraction
 from typing import Any
 
 from ..field import cells, ring, roots
@@ -20,7 +19,6 @@ from ..field.tower import Element, Tower
 from ..sheet.tree import Pt, Through
 from .plane import Curve, Round, Straight, Vec, square
 from .reader import Reader
-
 
 READ = "length"  # label of square roots adjoined by readers of a finished component
 

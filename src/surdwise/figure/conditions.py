@@ -45,11 +45,7 @@ def _collinear(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
 
 
 def _concyclic(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
-    out = []
-    for d in pts[3:]:
-        k = r.circumcentre(pts[0], pts[1], pts[2])
-        out.append(square(r.at(d) - k) - square(r.at(pts[0]) - k))
-    return out
+    return [r.incircle(pts[0], pts[1], pts[2], d) for d in pts[3:]]
 
 
 def _parallel(r: Reader, a: Any, b: Any) -> list[Element]:
@@ -95,8 +91,15 @@ def truth(c: Condition, j: Judge) -> bool:
         return all(compare(c.items[i], op, c.items[i + 1], j) for i, op in enumerate(c.ops))
     eqs = equations(c, j)
     if eqs is not None:
+        if c.form == "concyclic" and _in_row(j, c.args[0]):
+            return False
         return all(j.zero(e) for e in eqs)
     return CONDITIONS[c.form](j, *c.args)
+
+
+def _in_row(j: Judge, pts: Any) -> bool:
+    """Whether the first three points are collinear: they lie on no circle then."""
+    return j.zero(j.turn(*pts[:3]))
 
 
 def compare(left: Any, op: str, right: Any, j: Judge) -> bool:

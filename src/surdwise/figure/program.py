@@ -15,7 +15,7 @@ from ..field import cells, ring, roots
 from ..field.real import branches
 from ..field.ring import Poly
 from ..field.tower import Element
-from ..sheet.tree import Comparison, Fact, Line, Relation, Sheet
+from ..sheet.tree import Comparison, Fact, Line, Pt, Relation, Sheet
 from .base import Base, plug, solve
 from .component import Builder, Component, Frame, Require, outcomes
 from .conditions import equations
@@ -147,8 +147,21 @@ def _action(line: Line) -> Callable[[Builder], None]:
 def _relate(b: Builder, rel: Relation, text: str) -> None:
     eqs = equations(rel, b)
     assert eqs is not None, rel.form
+    if rel.form == "concyclic":
+        names: tuple[Pt, ...] = rel.args[0]  # type: ignore[assignment]
+        first, second, third = names[:3]
+        b.require(b.turn(first, second, third), "!=", f"{first}, {second}, {third} collinear")
     for e in eqs:
         b.vanish(e, f"{text} cannot hold")
+
+
+def radicands(c: Component) -> dict[str, Poly]:
+    """Irreducible factors of the norms of the squares of lengths that the figure is built on."""
+    out: dict[str, Poly] = {}
+    for step in c.tower.gens:
+        if step.choice == "positive" and step.radicand is not None and not ring.is_constant(step.radicand):
+            out.update(roots.norm_factors(Element(c.tower, step.radicand, ring.ONE)))
+    return out
 
 
 def figure_borders(c: Component) -> dict[str, Poly]:
@@ -178,5 +191,3 @@ def figure_borders(c: Component) -> dict[str, Poly]:
         if not ring.is_constant(step.orient):
             add(Element(c.tower, step.orient, ring.ONE))
     return {n: p for n, p in out.items() if not cells.never_zero(p, c.positive - c.folded)}
-
-

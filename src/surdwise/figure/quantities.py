@@ -7,6 +7,7 @@ needed.  Exact.
 
 from __future__ import annotations
 
+import itertools
 from collections.abc import Callable
 from fractions import Fraction
 
@@ -135,7 +136,7 @@ def _twice_area(r: Reader, q: Measure) -> Element:
     """Twice the signed area, by a fan of triangles from the first vertex."""
     first, *rest = q.points
     total = r.number(0)
-    for a, b in zip(rest, rest[1:], strict=False):
+    for a, b in itertools.pairwise(rest):
         total = total + r.turn(first, a, b)
     return total
 
@@ -190,12 +191,12 @@ def _median2(r: Reader, q: Measure) -> Element:
 
 
 def _altitude(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(q)
+    _a, b, c = _turned(q)
     return r.divide(r.absolute(_whole(r, q)), r.span(b, c), "the side is not defined")
 
 
 def _altitude2(r: Reader, q: Measure) -> Element:
-    a, b, c = _turned(q)
+    _a, b, c = _turned(q)
     d = _whole(r, q)
     return r.divide(d * d, r.gap2(b, c), "the side is not defined")
 

@@ -56,9 +56,17 @@ class Reader(ABC):
 
     def lean(self, a: PointRef, b: PointRef, c: PointRef) -> Element:
         """Scalar product of the vectors from a to b and c."""
-        return self.kept(
-            ("lean", a, b, c), lambda: dot(self.at(b) - self.at(a), self.at(c) - self.at(a))
-        )
+        return self.kept(("lean", a, b, c), lambda: dot(self.at(b) - self.at(a), self.at(c) - self.at(a)))
+
+    def incircle(self, a: PointRef, b: PointRef, c: PointRef, d: PointRef) -> Element:
+        """The determinant that vanishes when four points lie on a circle (or three of them, a,
+        b, c, on a line with d on it too): sum of squared distances from d times signed areas."""
+
+        def make() -> Element:
+            p, q, s = (self.at(x) - self.at(d) for x in (a, b, c))
+            return square(p) * cross(q, s) + square(q) * cross(s, p) + square(s) * cross(p, q)
+
+        return self.kept(("incircle", a, b, c, d), make)
 
     def offset(self, p: PointRef, ref: CurveRef) -> Element:
         """Signed area of a line's direction and the way from the line to p."""

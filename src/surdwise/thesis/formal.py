@@ -9,7 +9,7 @@ from __future__ import annotations
 from collections.abc import Callable
 from dataclasses import dataclass
 from fractions import Fraction
-from typing import Any
+from typing import Any, cast
 
 from ..field import roots
 from ..field.ring import Poly
@@ -176,7 +176,7 @@ def thesis(claim: Comparison, points: list[str], keeps_scale: bool) -> Thesis:
     for n in points:
         b.free_point(Pt(n), distinct=True)
     r = Formal(b.comp)
-    left, right = (value(q, r) for q in claim.items)
+    left, right = (cast(Ratio, value(q, r)) for q in claim.items)
     t = r.comp.tower
     one = left.num * right.den
     two = right.num * left.den
@@ -190,5 +190,3 @@ def thesis(claim: Comparison, points: list[str], keeps_scale: bool) -> Thesis:
         dict(frame.labels),
         placed,
     )
-
-

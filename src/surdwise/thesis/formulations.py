@@ -14,7 +14,7 @@ from dataclasses import dataclass
 
 from ..field import ring, roots
 from ..field.ring import Poly
-from ..field.tower import Tower
+from ..field.tower import Gen, Tower
 from .formal import Thesis
 from .parts import Form
 
@@ -90,16 +90,15 @@ def sign_product(t: Thesis, tick: Callable[[], None] = lambda: None) -> tuple[Po
         if last and a.is_zero():
             p = b
         else:
-            p = t.tower.reduce(a * a - b * b * ring_radicand(g))
+            p = t.tower.reduce(a * a - b * b * square_of(g))
         p = ring.primitive(p)
     return (p, *_numbers(t))
 
 
-def ring_radicand(g: object) -> Poly:
+def square_of(g: Gen) -> Poly:
     """The square of a length symbol."""
-    q = getattr(g, "radicand")  # noqa: B009
-    assert q is not None
-    return q
+    assert g.radicand is not None
+    return g.radicand
 
 
 def eliminant(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
@@ -137,7 +136,7 @@ def minimal(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
         if p.degrees()[g.slot] <= 0:
             continue
         a, b = ring.coefficients(p, g.slot)
-        p = ring.primitive(field.reduce(a * a - b * b * ring_radicand(g)))
+        p = ring.primitive(field.reduce(a * a - b * b * square_of(g)))
     return (_without_powers(p, field), *(g.modulus for g in field.gens if g.label == "number"))
 
 

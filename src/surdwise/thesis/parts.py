@@ -115,7 +115,9 @@ class _Signed(Reader):
         """Nothing to check in algebra."""
 
 
-def parts(comp: Component, claim: Comparison | Relation, tick: Callable[[], None] = lambda: None) -> list[Part]:
+def parts(
+    comp: Component, claim: Comparison | Relation, tick: Callable[[], None] = lambda: None
+) -> list[Part]:
     """All parts of one component for an equality."""
     out: list[Part] = []
     pending: list[tuple[int, ...]] = [()]

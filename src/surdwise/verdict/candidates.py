@@ -52,7 +52,7 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     """Candidate conditions on the figure's points."""
     names = sorted({n for c in comps for n in c.points}, key=lambda n: (n not in _mentioned(sheet), n))
     pts = [Pt(n) for n in names[:MAX_POINTS]]
-    straight = {
+    straight: set[tuple[str, ...]] = {
         tri for tri in combinations([p.name for p in pts], 3) if all(_collinear(c, tri) for c in comps)
     }
     shapes = _triangles(sheet)
@@ -64,6 +64,16 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     yield from _insides(pts, straight, shapes)
     yield from _lengths_compared(pts, used, shapes, _constants(sheet))
     yield from _convexes(sheet, pts)
+    if len(pts) <= 6:
+        yield from _incidences(pts, straight)
+
+
+def _incidences(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candidate]:
+    for tri in combinations(pts, 3):
+        if tuple(sorted(p.name for p in tri)) not in straight:
+            yield Candidate(Relation("collinear", (tri,)), 1.6)
+    for quad in combinations(pts, 4):
+        yield Candidate(Relation("concyclic", (quad,)), 1.6)
 
 
 def says_the_same(c: Condition, claim: Condition) -> bool:
@@ -97,6 +107,11 @@ def _coincidences(pts: list[Pt]) -> Iterator[Candidate]:
 
 
 def _betweens(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candidate]:
+    if len(pts) <= 5:
+        for mid in pts:
+            for u, v in combinations([p for p in pts if p != mid], 2):
+                if tuple(sorted((u.name, v.name, mid.name))) not in straight:
+                    yield Candidate(Relation("between", (mid, u, v)), 1.7)
     for tri in straight:
         for c in tri:
             a, b = (x for x in tri if x != c)
@@ -108,9 +123,7 @@ def _betweens(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candida
                 yield Candidate(Or((inner, end)), 1.25)
 
 
-def _sides(
-    pts: list[Pt], straight: set[tuple[str, ...]], lines: set[tuple[str, ...]]
-) -> Iterator[Candidate]:
+def _sides(pts: list[Pt], straight: set[tuple[str, ...]], lines: set[tuple[str, ...]]) -> Iterator[Candidate]:
     for a, b in combinations(pts, 2):
         extra = 0.0 if tuple(sorted((a.name, b.name))) in lines else 0.4
         rest = [p for p in pts if p.name not in (a.name, b.name)]
@@ -124,7 +137,9 @@ def _sides(
             yield Candidate(Relation("opposite_sides", (p, q, line)), cost)
 
 
-def _angles(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]) -> Iterator[Candidate]:
+def _angles(
+    pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]
+) -> Iterator[Candidate]:
     for tri in shapes:
         for size in ("acute", "obtuse", "right"):
             yield Candidate(Relation("triangle_size", (tri, size)), 0.9)
@@ -132,7 +147,7 @@ def _angles(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt
     for tri in combinations(pts, 3):
         if tuple(sorted(p.name for p in tri)) in straight:
             continue
-        extra = 0.0 if frozenset(p.name for p in tri) in named else 0.5
+        extra = 0.0 if frozenset(p.name for p in tri) in named else 1.1
         for i in range(3):
             a = tri[i]
             b, c = tri[(i + 1) % 3], tri[(i + 2) % 3]
@@ -140,7 +155,9 @@ def _angles(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt
                 yield Candidate(Relation("angle_size", ((b, a, c), size)), 1.0 + extra)
 
 
-def _insides(pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]) -> Iterator[Candidate]:
+def _insides(
+    pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]
+) -> Iterator[Candidate]:
     named = {frozenset(p.name for p in tri) for tri in shapes}
     for tri in combinations(pts, 3):
         if tuple(sorted(p.name for p in tri)) in straight:
@@ -177,8 +194,10 @@ def _lengths_compared(
         for one, two in permutations(pairs, 2):
             if len({one[0].name, one[1].name, two[0].name, two[1].name}) == 4 and len(pairs) > 6:
                 continue
-            right = Binary("/", length(*two), Number(1 / k)) if (1 / k).denominator == 1 else Binary(
-                "*", Number(k), length(*two)
+            right = (
+                Binary("/", length(*two), Number(1 / k))
+                if (1 / k).denominator == 1
+                else Binary("*", Number(k), length(*two))
             )
             yield Candidate(Comparison((length(*one), right), ("=",)), 1.9)
 

@@ -14,12 +14,12 @@ from ..field.tower import Element
 from ..figure.component import Component
 from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
 from ..figure.program import Program, program
-from .frames import cheapest_frame
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
 from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .candidates import Candidate, candidates
 from .explain import explain
+from .frames import cheapest_frame
 from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
 from .spot import Undefined
 from .survey import OutOfTime, Place, Statement, Survey, Surveyor

@@ -11,7 +11,9 @@ def explain(d: Decision, total: int, true: int) -> str:
     out = [_opening(d, total, true)]
     others = [v for v in d.variants if not v.as_written]
     if d.algebraic and d.verdict is not Verdict.HOLDS and others:
-        listed = "; ".join(f"`{v.claim}`" + (f" where {v.condition}" if v.condition else "") for v in others[:4])
+        listed = "; ".join(
+            f"`{v.claim}`" + (f" where {v.condition}" if v.condition else "") for v in others[:4]
+        )
         more = f" and {len(others) - 4} more" if len(others) > 4 else ""
         out.append(f"The same squares also fit {listed}{more}: only the signs of lengths tell them apart.")
     if d.algebraic.get("squared") == "true on parts and false on parts" and others:

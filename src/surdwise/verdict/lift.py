@@ -33,7 +33,7 @@ from ..field.near import (
     near_branches,
     root_enclosure,
 )
-from ..field.real import Unsettled, isolate
+from ..field.real import Unsettled, isolate, simplest_between
 from ..field.ring import Poly, Rational
 from ..field.tower import Element
 from ..figure.component import Component
@@ -41,17 +41,16 @@ from ..figure.conditions import Judge
 from ..figure.plane import Vec, square
 from .spot import Register, Spot, Undefined
 
-HEAVY = 2
+HEAVY = {1: 6, 2: 2}  # largest degree that becomes an equation, by number of parameters
+HEAVY_BEYOND = 4
 WIDTHS = (20, 60)
 Statement = Callable[[Judge], bool]
 
 
 def heavy(p: Poly, comp: Component) -> bool:
     """Whether a border is too large to become an equation of the figure."""
-    if len(comp.free) != 2:
-        return False
     degs = [p.degrees()[ring.param_slot(k)] for k in comp.free]
-    return min(degs) > HEAVY
+    return min(degs) > HEAVY.get(len(comp.free), HEAVY_BEYOND)
 
 
 @dataclass(frozen=True)
@@ -66,9 +65,7 @@ class Lifted:
 class LiftSpot(Spot):
     """A spot over an enclosed point: signs in balls, zero proved by a change of sign."""
 
-    def __init__(
-        self, comp: Component, branch: NearBranch, flanks: tuple[dict[int, Rational], ...]
-    ) -> None:
+    def __init__(self, comp: Component, branch: NearBranch, flanks: tuple[dict[int, Rational], ...]) -> None:
         super().__init__(comp, branch, Register())  # type: ignore[arg-type]
         self.near = branch
         self.flanks = flanks
@@ -133,7 +130,6 @@ def lift(
 ) -> tuple[list[Lifted], list[tuple[Poly, ...]], bool]:
     """Judge arcs and critical points of the given curves.  Besides the points: the systems of
     equations whose points stayed unsettled, and whether all arcs were settled."""
-    plan = _plan(comp, register, curves, exact, order, tick)
     out: list[Lifted] = []
     open_: list[tuple[Poly, ...]] = []
     complete = True
@@ -152,6 +148,14 @@ def lift(
                 settled = False
         return settled
 
+    if len(order) == 1:
+        for g in curves:
+            before = len(out)
+            if not judged(_roots(comp, register, g, order[0]), NEAR_PREC):
+                del out[before:]
+                open_.append((g,))
+        return out, open_, True
+    plan = _plan(comp, register, curves, exact, order, tick)
     try:
         complete &= judged(_arcs(plan), NEAR_PREC)
     except Unsettled:
@@ -182,6 +186,22 @@ def _judged(
         return tuple(s(spot) for s in statements)
     except Undefined:
         return None
+
+
+def _roots(comp: Component, register: Register, g: Poly, k: int) -> Iterator[Point]:
+    """The zeros of a polynomial in one parameter, with rational neighbours on both sides."""
+    slot = ring.param_slot(k)
+    polys = [ring.univariate(p, slot) for p in register.polys.values()]
+    spaces = cells.gaps([p for p in polys if p.degree() > 0], k in comp.positive)
+    picks = [simplest_between(a, b) for a, b in spaces]
+    line = ring.univariate(g, slot)
+    for i, root in enumerate(isolate(line, 128)):
+        if k in comp.positive and not root > 0:
+            continue
+        lower, higher = [q for q in picks if root > q], [q for q in picks if root < q]
+        if not lower or not higher or len(lower) + len(higher) != len(picks):
+            raise Unsettled("a zero is not separated from its neighbours")
+        yield 0, {k: root_enclosure(line, i)}, ({k: max(lower)}, {k: min(higher)})
 
 
 Point = tuple[int, dict[int, Enclosure], tuple[dict[int, Rational], ...]]
@@ -248,7 +268,9 @@ def _plan(
                         pair = name, ring.key(g)
                         crossings[pair] = (*crossings.get(pair, ()), p)
     figure = tuple(register.of(["figure"]))
-    return Plan(u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()), crossings, comp.boxes)
+    return Plan(
+        u, v, comp.positive, tuple(curves), figure, tuple(upper), tuple(below.values()), crossings, comp.boxes
+    )
 
 
 def _arcs(plan: Plan) -> Iterator[Point]:
@@ -257,10 +279,10 @@ def _arcs(plan: Plan) -> Iterator[Point]:
     uslot, vslot = ring.param_slot(u), ring.param_slot(v)
     bottom = [ring.univariate(p, uslot) for p in plan.below]
     for low, high in cells.gaps(bottom, u in plan.positive):
-        s = cells.simplest_between(low, high)
+        s = simplest_between(low, high)
         fibres = [ring.univariate(ring.substitute(p, {u: s}), vslot) for p in plan.upper]
         spaces = cells.gaps([f for f in fibres if f.degree() > 0], v in plan.positive)
-        picks = [cells.simplest_between(a, b) for a, b in spaces]
+        picks = [simplest_between(a, b) for a, b in spaces]
         for g in plan.curves:
             f = ring.univariate(ring.substitute(g, {u: s}), vslot)
             if f.degree() < 1:

@@ -22,7 +22,7 @@ from ..figure.component import READ, Component
 from ..figure.conditions import Judge
 from ..figure.plane import Curve, Round, Straight, Vec, square
 
-CELL = frozenset({"figure", "fold", "open", "closed"})
+CELL = frozenset({"figure", "domain", "fold", "open", "closed"})
 
 
 class Undefined(Exception):
@@ -33,9 +33,10 @@ class Undefined(Exception):
 class Register:
     """Border polynomials of a component by key, each with the kinds of its origins.
 
-    `figure`: the construction changes; `fold`: the inside of an absolute value changes sign;
-    `open`, `closed`: a strict or weak comparison does; `thin`: an equation holds there only.
-    All but `thin` bound cells.
+    `figure`: the construction changes; `domain`: a square root stops being defined; `fold`:
+    the inside of an absolute value changes sign; `open`, `closed`: a strict or weak comparison
+    does; `thin`: an equation holds there only; `avoid`: samples keep off it, no more.  All but
+    the last two bound cells.
     """
 
     polys: dict[str, Poly] = field(default_factory=dict)
@@ -150,7 +151,7 @@ class Spot(Judge):
         if r is not None:
             return self.absolute(r)
         if cells.known_sign(q.num, self.comp.positive) * cells.known_sign(q.den, self.comp.positive) <= 0:
-            s = self._sign(q, "fold")
+            s = self._sign(q, "domain")
             if s < 0:
                 raise Undefined("a square root of a negative quantity")
         self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", READ)

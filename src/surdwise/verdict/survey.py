@@ -17,7 +17,7 @@ from ..field.real import Branch, Unsettled, branches
 from ..field.ring import Poly
 from ..figure.component import Component
 from ..figure.conditions import Judge
-from ..figure.program import Program, Run
+from ..figure.program import Program, Run, radicands
 from .lift import heavy, lift
 from .spot import Register, Spot, Undefined
 
@@ -107,6 +107,7 @@ class Surveyor:
                 continue
             register = Register()
             register.enter("figure", borders)
+            register.enter("avoid", radicands(comp))
             before = len(self.result.places)
             self._component(comp, register, depth)
             found = self.result.places[before:]
@@ -118,7 +119,10 @@ class Surveyor:
             exact: list[Poly] = list(register.of(["figure"]).values())
             for n, p in self._matters(register, found).items():
                 if "figure" not in register.kinds[n] and heavy(p, comp):
-                    curves.append(p)
+                    if len(comp.free) <= 2:
+                        curves.append(p)
+                    else:
+                        self.result.not_examined.append(f"a border of degree {p.total_degree()}")
                     continue
                 exact.append(p)
                 old = todo.get(n)
@@ -171,23 +175,22 @@ class Surveyor:
         real figure at u = 0, a limit of none.)
         """
         if self.closed and all(all(p.truths) for p in found):
-            kinds = ["figure", "admission:closed", "admission:thin"]
+            kinds = ["figure", "domain", "admission:closed", "admission:thin"]
             return register.of(kinds if self.open_conditions else [*kinds, "admission:open"])
-        return register.of(["figure", "open", "closed", "thin"])
+        return register.of(["figure", "domain", "open", "closed", "thin"])
 
     # ------------------------------------------------------------------ one component
 
     def _component(self, comp: Component, register: Register, depth: int) -> None:
+        comp.eliminations.tick = self.tick
         order = self._order(comp, register)
         tower = comp.ground()
         while True:
             count = register.count()
             places: list[Place] = []
             loose = 0
-            thin = list(register.of(["thin"]).values())
-            for sample in cells.open_cells(
-                register.borders(), order, comp.positive, thin, comp.eliminations
-            ):
+            thin = list(register.of(["thin", "avoid"]).values())
+            for sample in cells.open_cells(register.borders(), order, comp.positive, thin, comp.eliminations):
                 self.tick()
                 self.result.cells += 1
                 try:
@@ -197,7 +200,7 @@ class Surveyor:
                             places.append(place)
                 except Unsettled:
                     loose += 1
-            if register.count() == count and len(thin) == len(register.of(["thin"])):
+            if register.count() == count and len(thin) == len(register.of(["thin", "avoid"])):
                 if loose:
                     raise Unsettled("a sample lies on a special place that no border explains")
                 self.result.places += places

@@ -97,5 +97,3 @@ def touch_point(b: Builder, t: Pt, tri: tuple[Pt, ...], pair: tuple[Pt, ...]) ->
 def centre(b: Builder, o: Pt, k: Any) -> None:
     """Centre of a circle."""
     b.put(o, b.circle(k).centre)
-
-

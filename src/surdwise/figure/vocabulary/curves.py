@@ -109,5 +109,3 @@ def tangent(b: Builder, m: Named, k: Any, a: Pt) -> None:
     b.vanish(square(p - c.centre) - c.radius2, f"{a} is not on the circle")
     b.require(c.radius2, "!=", "the circle has radius 0")
     _name(b, m, Straight(p, (p - c.centre).turned()))
-
-

@@ -91,5 +91,3 @@ def square_corners(b: Builder, d: Pt, e: Pt, pair: tuple[Pt, ...], side: str, ma
     b.put(d, q + up)
     b.put(e, p + up)
     _sided(b, p, q, q + up, side, mark)
-
-

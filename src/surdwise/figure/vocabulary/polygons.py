@@ -180,9 +180,7 @@ def cyclic_quadrilateral(b: Builder, quad: tuple[Pt, ...]) -> None:
     """Concyclic, in that order round the circle."""
     order = sorted(quad, key=lambda p: not b.has(p.name))
     _ensure(b, order[:3])
-    b.require(
-        orientation(*(b.at(p) for p in order[:3])), "!=", ", ".join(map(str, order[:3])) + " collinear"
-    )
+    b.require(orientation(*(b.at(p) for p in order[:3])), "!=", ", ".join(map(str, order[:3])) + " collinear")
     on_round(b, order[3], b.circle_through(order[0], order[1], order[2]))
     _convex(b, quad)
 
@@ -227,5 +225,3 @@ def regular_pentagon(b: Builder, names: tuple[Pt, ...]) -> None:
 def regular_hexagon(b: Builder, names: tuple[Pt, ...]) -> None:
     """Turning angle 60 degrees."""
     _regular(b, names, b.number(Fraction(1, 2)), b.root(b.number(3)) / 2)
-
-

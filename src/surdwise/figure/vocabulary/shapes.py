@@ -80,18 +80,18 @@ def isosceles_triangle(b: Builder, names: tuple[Pt, ...], apex: Pt) -> None:
         for p in base:
             if p.name in new:
                 b.free_point(p, distinct=True, off_line=True)
-        p, q = b.at(base[0]), b.at(base[1])
+        u, v = b.at(base[0]), b.at(base[1])
         first = len(b.comp.points) == 2 and new == {x.name for x in names}
         t = b.param(f"height of {apex}", positive=first)
-        b.put(apex, (p + q) / 2 + (q - p).turned() * t)
+        b.put(apex, (u + v) / 2 + (v - u).turned() * t)
     elif len(new) == 1:
         there = next(p for p in base if p.name not in new)
         other = next(p for p in base if p.name in new)
         swing(b, other, b.at(apex), b.at(there))
     else:
         corners(b, names)
-        a, p, q = b.at(apex), b.at(base[0]), b.at(base[1])
-        b.vanish(square(p - a) - square(q - a), f"|{apex}{base[0]}| = |{apex}{base[1]}| cannot hold")
+        a, u, v = b.at(apex), b.at(base[0]), b.at(base[1])
+        b.vanish(square(u - a) - square(v - a), f"|{apex}{base[0]}| = |{apex}{base[1]}| cannot hold")
     not_flat(b, names)
 
 
