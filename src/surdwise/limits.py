@@ -29,12 +29,11 @@ def run_limited(
     from pebble import CONSTS, ProcessExpired, ProcessPool
 
     CONSTS.term_timeout = GRACE
-    setup = [mebibytes] if mebibytes is not None else []
     with ProcessPool(
         max_workers=1,
         context=get_context("fork"),
-        initializer=_confine if setup else None,
-        initargs=setup,
+        initializer=_confine,
+        initargs=[mebibytes],
     ) as pool:
         future = pool.schedule(work, args=args, timeout=seconds)
         try:
@@ -47,10 +46,15 @@ def run_limited(
             raise LimitReached(f"the memory limit of {mebibytes} MiB was reached") from e
 
 
-def _confine(mebibytes: int) -> None:
-    """Cap the address space of this process, silently: no core files, no last words."""
-    os.dup2(os.open(os.devnull, os.O_WRONLY), 2)
+def _confine(mebibytes: int | None) -> None:
+    """Make this process silent (no core files, no last words of a library that runs out of
+    memory) and cap its address space."""
+    sink = os.open(os.devnull, os.O_WRONLY)
+    os.dup2(sink, 1)
+    os.dup2(sink, 2)
     resource.setrlimit(resource.RLIMIT_CORE, (0, 0))
+    if mebibytes is None:
+        return
     with open("/proc/self/statm", encoding="ascii") as f:
         used = int(f.read().split()[0]) * resource.getpagesize()
     top = used + mebibytes * MIB

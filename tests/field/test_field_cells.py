@@ -24,7 +24,7 @@ def _floats(p: Poly, xs: list[Any]) -> tuple[Any, Any]:
     for mono, c in p.terms():
         term = np.full(POINTS, float(int(c.p)) / float(int(c.q)))
         for k, x in enumerate(xs):
-            term = term * x ** mono[ring.param_slot(k)]
+            term = term * x ** int(mono[ring.param_slot(k)])
         total += term
         size = np.maximum(size, np.abs(term))
     return total, size

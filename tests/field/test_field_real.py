@@ -30,7 +30,7 @@ def value(p: Poly, point: dict[int, Any]) -> Any:
         term = mpmath.mpf(int(c.p)) / int(c.q)
         for slot, e in enumerate(mono):
             if e:
-                term *= point[slot] ** e
+                term *= point[slot] ** int(e)
         total += term
     return total
 

@@ -60,7 +60,7 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     yield from _coincidences(pts)
     yield from _betweens(pts, straight)
     yield from _sides(pts, straight, _lines(sheet))
-    yield from _angles(pts, straight, shapes)
+    yield from _angles(pts, straight, shapes, _corners(sheet))
     yield from _insides(pts, straight, shapes)
     yield from _lengths_compared(pts, used, shapes, _constants(sheet))
     yield from _convexes(sheet, pts)
@@ -71,9 +71,9 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
 def _incidences(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candidate]:
     for tri in combinations(pts, 3):
         if tuple(sorted(p.name for p in tri)) not in straight:
-            yield Candidate(Relation("collinear", (tri,)), 1.6)
+            yield Candidate(Relation("collinear", (tri,)), 1.8)
     for quad in combinations(pts, 4):
-        yield Candidate(Relation("concyclic", (quad,)), 1.6)
+        yield Candidate(Relation("concyclic", (quad,)), 2.2)
 
 
 def says_the_same(c: Condition, claim: Condition) -> bool:
@@ -138,7 +138,10 @@ def _sides(pts: list[Pt], straight: set[tuple[str, ...]], lines: set[tuple[str, 
 
 
 def _angles(
-    pts: list[Pt], straight: set[tuple[str, ...]], shapes: list[tuple[Pt, ...]]
+    pts: list[Pt],
+    straight: set[tuple[str, ...]],
+    shapes: list[tuple[Pt, ...]],
+    corners: set[tuple[str, ...]],
 ) -> Iterator[Candidate]:
     for tri in shapes:
         for size in ("acute", "obtuse", "right"):
@@ -151,8 +154,9 @@ def _angles(
         for i in range(3):
             a = tri[i]
             b, c = tri[(i + 1) % 3], tri[(i + 2) % 3]
+            more = 0.0 if {(b.name, a.name, c.name), (c.name, a.name, b.name)} & corners else extra
             for size in ("acute", "right", "obtuse"):
-                yield Candidate(Relation("angle_size", ((b, a, c), size)), 1.0 + extra)
+                yield Candidate(Relation("angle_size", ((b, a, c), size)), 1.0 + more)
 
 
 def _insides(
@@ -245,6 +249,17 @@ def _triangles(sheet: Sheet) -> list[tuple[Pt, ...]]:
         for f in _facts(sheet)
         if f.form.endswith("triangle") and f.form != "inside_triangle" and isinstance(f.args[0], tuple)
     ]
+
+
+def _corners(sheet: Sheet) -> set[tuple[str, ...]]:
+    """Corners of the sheet's polygons: neighbour, vertex, neighbour."""
+    out: set[tuple[str, ...]] = set()
+    for f in _facts(sheet):
+        q = f.args[0]
+        if isinstance(q, tuple) and len(q) >= 4 and f.form != "points":
+            names = [p.name for p in q]
+            out.update((names[i - 2], names[i - 1], names[i]) for i in range(len(names)))
+    return out
 
 
 def _lines(sheet: Sheet) -> set[tuple[str, ...]]:

@@ -151,7 +151,11 @@ def lift(
     if len(order) == 1:
         for g in curves:
             before = len(out)
-            if not judged(_roots(comp, register, g, order[0]), NEAR_PREC):
+            try:
+                settled = judged(_roots(comp, register, g, order[0]), NEAR_PREC)
+            except Unsettled:
+                settled = False
+            if not settled:
                 del out[before:]
                 open_.append((g,))
         return out, open_, True

@@ -1,0 +1,176 @@
+"""Verdicts of published statements: verdict, condition or equality case, source beside each."""
+
+from __future__ import annotations
+
+import pytest
+
+from surdwise import Verdict, decide, read
+
+# sheet text; verdict; condition (or equality case for an inequality) as the program words it
+ANSWERS = [
+    # three points of a line: one length is the sum of the two others (Euclid's common notions)
+    (
+        "given points P, Q, X\ngiven P, Q, X collinear\nclaim |PX| + |XQ| = |PQ|",
+        Verdict.CONDITIONAL,
+        "X between P and Q",
+    ),
+    # the same, the point free to fall on an end
+    (
+        "given points P, Q\ngiven X on line PQ\nclaim |PX| + |XQ| = |PQ|",
+        Verdict.CONDITIONAL,
+        "X between P and Q or not P, X distinct or not Q, X distinct",
+    ),
+    # chord sums on the circle of an equilateral triangle (van Schooten's theorem)
+    (
+        "given equilateral triangle ABC\ngiven P on circle ABC\nclaim |PA| = |PB| + |PC|",
+        Verdict.CONDITIONAL,
+        "not A and P on the same side of BC",
+    ),
+    (
+        "given equilateral triangle ABC\ngiven P on circle ABC\n"
+        "provided P and A on opposite sides of BC\nclaim |PA| = |PB| + |PC|",
+        Verdict.HOLDS,
+        None,
+    ),
+    # Carnot's theorem on the distances of the circumcentre from the sides
+    (
+        "given triangle ABC\ngiven O = circumcentre of ABC\n"
+        "claim dist(O, AB) + dist(O, BC) + dist(O, CA) = circumradius(ABC) + inradius(ABC)",
+        Verdict.CONDITIONAL,
+        "not ABC obtuse",
+    ),
+    # Viviani's theorem
+    (
+        "given equilateral triangle ABC\ngiven point P\n"
+        "claim dist(P, AB) + dist(P, BC) + dist(P, CA) = altitude(ABC, A)",
+        Verdict.CONDITIONAL,
+        "not P outside ABC",
+    ),
+    # Euler: O, G, H in a row, |OH| = 3|OG|
+    (
+        "given triangle ABC\ngiven O = circumcentre of ABC\ngiven G = centroid of ABC\n"
+        "given H = orthocentre of ABC\nclaim |OH| = 3|OG|",
+        Verdict.HOLDS,
+        None,
+    ),
+    # equilateral triangles outwards: equal joins (Fermat, Torricelli)
+    (
+        "given triangle ABC\ngiven D = apex of equilateral triangle on BC away from A\n"
+        "given E = apex of equilateral triangle on CA away from B\nclaim |AD| = |BE|",
+        Verdict.HOLDS,
+        None,
+    ),
+    # Thales, with the meets of a line through the centre free to coincide
+    (
+        "given points O, A, B\ngiven k = circle with centre O through A\ngiven l = line OB\n"
+        "given X = meet of l and k\ngiven Y = meet of l and k\ngiven P on circle k\n"
+        "claim XP perpendicular to YP",
+        Verdict.CONDITIONAL,
+        "O between X and Y",
+    ),
+    # a parallelogram with equal diagonals is a rectangle (Euclid)
+    ("given parallelogram ABCD\nclaim |AC| = |BD|", Verdict.FAILS, "angle CBA right"),
+    # the sum of two sides is never the third
+    ("given triangle ABC\nclaim |AB| + |BC| = |CA|", Verdict.FAILS, "never"),
+    # a string shorter than the gap it spans
+    ("given points P, Q\ngiven point X\ngiven |PX| + |XQ| = |PQ|/2\nclaim |PX| = |XQ|", Verdict.EMPTY, None),
+    # no parameter: the unit square
+    ("given square ABCD\nclaim |AC|^2 = 2|AB|^2", Verdict.HOLDS, None),
+    ("given square ABCD\nclaim |AC| = 3/2|AB|", Verdict.FAILS, "never"),
+]
+
+INEQUALITIES = [
+    # Euclid I.20
+    ("given triangle ABC\nclaim |AB| + |BC| > |CA|", Verdict.HOLDS, "never"),
+    # medians and perimeter (Bottema et al., Geometric Inequalities, 8.1; from memory)
+    (
+        "given triangle ABC\nclaim median(ABC, A) + median(ABC, B) + median(ABC, C) < perimeter(ABC)",
+        Verdict.HOLDS,
+        "never",
+    ),
+    (
+        "given triangle ABC\nclaim median(ABC, A) + median(ABC, B) + median(ABC, C) > 3/4 perimeter(ABC)",
+        Verdict.HOLDS,
+        "never",
+    ),
+    # Euler's R >= 2r.  Its equality case once came out as `never` in the side-length frame: the
+    # square factor of a discriminant had been taken out and its zero was not looked at
+    (
+        "given triangle ABC\nclaim circumradius(ABC) >= 2inradius(ABC)",
+        Verdict.HOLDS,
+        "|AB| = |AC| and |AB| = |BC|",
+    ),
+    # altitudes and inradius (Bottema et al. 6.8; from memory)
+    (
+        "given triangle ABC\nclaim altitude(ABC, A) + altitude(ABC, B) + altitude(ABC, C) >= 9inradius(ABC)",
+        Verdict.HOLDS,
+        "|AB| = |AC| and |AB| = |BC|",
+    ),
+    # a median is not shorter than the bisector from the same vertex
+    ("given triangle ABC\nclaim median(ABC, A) >= bisector(ABC, A)", Verdict.HOLDS, "|AB| = |AC|"),
+]
+
+
+@pytest.mark.parametrize(("text", "verdict", "words"), ANSWERS)
+def test_equality(text: str, verdict: Verdict, words: str | None) -> None:
+    (sheet,) = read(text + "\n")
+    (d,) = decide(sheet)
+    assert d.verdict is verdict, d
+    if verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
+        assert d.condition == words
+
+
+@pytest.mark.parametrize("frame", ["cartesian", "sides"])
+@pytest.mark.parametrize(("text", "verdict", "words"), INEQUALITIES)
+def test_inequality(text: str, verdict: Verdict, words: str | None, frame: str) -> None:
+    (sheet,) = read(text + "\n")
+    (d,) = decide(sheet, frame=frame)
+    assert d.verdict is verdict
+    assert d.equality == words
+
+
+def test_strict_fails_on_a_thin_set_only() -> None:
+    """bisector < median is false for isosceles triangles alone: conditional, not holds."""
+    (sheet,) = read("given triangle ABC\nclaim bisector(ABC, A) < median(ABC, A)\n")
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.CONDITIONAL
+    assert d.condition in ("|AB| < |AC| or |AB| > |AC|", "not |AB| = |AC|")
+
+
+def test_eight_components_true_on_two() -> None:
+    """Lengths as unknowns on three collinear points: 2^3 sign choices, two of them fit."""
+    (sheet,) = read("given points P, Q, X\ngiven P, Q, X collinear\nclaim |PX| + |XQ| = |PQ|\n")
+    (d,) = decide(sheet)
+    assert len(d.components) == 8
+    assert sum(c.status == "generally true" for c in d.components) == 2
+    assert d.algebraic["auxiliary"] == "true on parts and false on parts"
+    assert d.algebraic["sign_product"] == d.algebraic["eliminant"] == "generally true"
+    assert {v.claim: v.condition for v in d.variants} == {
+        "|PQ| = |PX| + |XQ|": "X between P and Q",
+        "|PX| = |XQ| + |PQ|": "Q between P and X",
+        "|XQ| = |PX| + |PQ|": "P between Q and X",
+    }
+
+
+def test_four_components_of_three_apexes() -> None:
+    """Equilateral triangles on three sides, either side each: the root of 3 has a sign at each,
+    up to a common one: 4 components over the field of the triangle."""
+    (sheet,) = read(
+        "given triangle ABC\ngiven D = apex of equilateral triangle on BC\n"
+        "given E = apex of equilateral triangle on CA\ngiven F = apex of equilateral triangle on AB\n"
+        "claim |AD| = |BE|\n"
+    )
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.CONDITIONAL
+    assert len(d.components) == 4
+    assert sum(c.status == "generally true" for c in d.components) == 2
+
+
+def test_chain_has_links() -> None:
+    """r <= R/2 <= R: two links, one with equality for equilateral triangles, one never equal."""
+    (sheet,) = read("given triangle ABC\nclaim inradius(ABC) <= circumradius(ABC)/2 < circumradius(ABC)\n")
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.HOLDS
+    assert [x.verdict for x in d.links] == [Verdict.HOLDS, Verdict.HOLDS]
+    assert d.links[0].equality == "|AB| = |AC| and |AB| = |BC|"
+    assert d.links[1].equality == "never"
