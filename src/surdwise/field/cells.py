@@ -10,6 +10,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable, Iterator
 from itertools import combinations, pairwise
+from math import comb
 
 from flint import arb, fmpq, fmpz_poly
 
@@ -18,6 +19,9 @@ from .real import START_PREC, isolate, simplest_between
 from .ring import Poly, Rational
 
 Sample = dict[int, Rational]
+
+
+LARGEST_ELIMINATION = 400_000
 
 
 class TooManyCells(Exception):
@@ -82,12 +86,21 @@ class Eliminations:
 
     def discriminant(self, p: Poly, k: int) -> list[tuple[Poly, int]]:
         """Irreducible factors of the discriminant in parameter k, with multiplicities."""
+        self._check(p, p)
         return self._get((ring.key(p), "", k), lambda: p.discriminant(ring.PARAM_NAMES[k]))
 
     def resultant(self, p: Poly, q: Poly, k: int) -> list[tuple[Poly, int]]:
         """Irreducible factors of the resultant in parameter k, with multiplicities."""
+        self._check(p, q)
         a, b = sorted((ring.key(p), ring.key(q)))
         return self._get((a, b, k), lambda: p.resultant(q, ring.PARAM_NAMES[k]))
+
+    def _check(self, p: Poly, q: Poly) -> None:
+        """Refuse an elimination whose result may have too many terms (Bezout's bound)."""
+        others = len(set(ring.params_in(p)) | set(ring.params_in(q))) - 1
+        size = comb(p.total_degree() * q.total_degree() + others, others)
+        if size > LARGEST_ELIMINATION:
+            raise TooManyCells(f"an elimination with up to {size} terms in {others} parameters")
 
     def _get(self, name: tuple[str, str, int], make: Callable[[], Poly]) -> list[tuple[Poly, int]]:
         self.tick()

@@ -155,6 +155,16 @@ def _relate(b: Builder, rel: Relation, text: str) -> None:
         b.vanish(e, f"{text} cannot hold")
 
 
+def orientations(c: Component) -> dict[str, Poly]:
+    """Irreducible factors of the polynomials whose signs orient positive roots, lengths that
+    earlier readers adjoined included."""
+    out: dict[str, Poly] = {}
+    for step in c.tower.gens:
+        if not ring.is_constant(step.orient):
+            out.update({ring.key(f): f for f, _ in ring.irreducible_factors(step.orient)})
+    return {n: p for n, p in out.items() if not cells.never_zero(p, c.positive)}
+
+
 def radicands(c: Component) -> dict[str, Poly]:
     """Irreducible factors of the norms of the squares of lengths that the figure is built on."""
     out: dict[str, Poly] = {}

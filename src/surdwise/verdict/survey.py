@@ -17,7 +17,7 @@ from ..field.real import Branch, Unsettled, branches
 from ..field.ring import Poly
 from ..figure.component import Component
 from ..figure.conditions import Judge
-from ..figure.program import Program, Run, radicands
+from ..figure.program import Program, Run, orientations, radicands
 from .lift import heavy, lift
 from .spot import Register, Spot, Undefined
 
@@ -107,11 +107,12 @@ class Surveyor:
                 continue
             register = Register()
             register.enter("figure", borders)
+            register.enter("fold", orientations(comp))
             register.enter("avoid", radicands(comp))
             before = len(self.result.places)
             self._component(comp, register, depth)
             found = self.result.places[before:]
-            if depth == 0 and found:
+            if found and len(comp.free) == max(p.dimension for p in self.result.places):
                 self.result.borders.update(register.polys)
             if self.shallow:
                 continue
