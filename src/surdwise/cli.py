@@ -251,6 +251,14 @@ def compare(
                 print(table(head, rows) + "\n")
 
 
+@app.command()
+def words() -> None:
+    """Every form of the sheet language, with an example and what it means."""
+    from .sheet.reference import listing
+
+    print(listing())
+
+
 def _usage(text: str) -> None:
     print(text, file=sys.stderr)
     raise typer.Exit(BAD_SHEET)

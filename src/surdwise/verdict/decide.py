@@ -9,7 +9,7 @@ from dataclasses import dataclass, replace
 from ..field import exact, roots
 from ..field.cells import TooManyCells, never_zero
 from ..field.real import Branch, Unsettled
-from ..field.ring import PARAM_NAMES, TooLarge
+from ..field.ring import PARAM_NAMES, TooLarge, is_constant
 from ..field.tower import Element
 from ..figure.component import Component
 from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
@@ -418,8 +418,11 @@ def _frame(prog: Program, found: Survey) -> str:
 FRAME_NAMES = {"cartesian": "Cartesian", "sides": "side lengths"}
 
 
-def _coordinate(e: object) -> str:
+def _coordinate(e: Element) -> str:
     text = repr(e)[1:-1]
+    for g in e.tower.gens:
+        if g.radicand is not None and is_constant(g.radicand):
+            text = text.replace(f"g{g.index}", f"sqrt({g.radicand})")
     return text if len(text) <= 40 else "..."
 
 

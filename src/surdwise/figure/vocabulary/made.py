@@ -47,13 +47,6 @@ def reflection_in_line(b: Builder, image: Pt, p: Any, line: Any) -> None:
     b.put(image, b.foot(v, b.line(line), "the line is not defined") * 2 - v)
 
 
-@form("reflection_in_pair")
-def reflection_in_pair(b: Builder, image: Pt, p: Any, pair: tuple[Pt, ...]) -> None:
-    """Mirror image in the line through two points."""
-    v = b.at(p)
-    b.put(image, b.foot(v, b.line_of(pair), "the line is not defined") * 2 - v)
-
-
 @form("reflection_in_point")
 def reflection_in_point(b: Builder, image: Pt, p: Any, m: Any) -> None:
     """Mirror image in a point."""
