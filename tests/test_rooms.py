@@ -22,7 +22,10 @@ def _imports(path: Path) -> set[str]:
     depth = len(path.relative_to(SRC).parts) - 1
     for node in ast.walk(ast.parse(path.read_text(encoding="utf-8"))):
         if isinstance(node, ast.ImportFrom) and node.level:
-            parts = [*path.relative_to(SRC).parts[:depth][: depth - node.level + 1], *(node.module or "").split(".")]
+            parts = [
+                *path.relative_to(SRC).parts[:depth][: depth - node.level + 1],
+                *(node.module or "").split("."),
+            ]
             out.add("." + parts[0] if parts and parts[0] else ".")
         elif isinstance(node, ast.ImportFrom):
             out.add((node.module or "").split(".")[0])

@@ -75,7 +75,9 @@ def test_memory_limit_stops_the_work(tmp_path: Path) -> None:
         "given triangle ABC\n"
         "claim bisector(ABC, A) + bisector(ABC, B) + bisector(ABC, C) <= sqrt(3)*perimeter(ABC)/2\n"
     )
-    done = run("decide", heavy, "--memory-limit", "16", "--frame", "cartesian", "--time-limit", "60", "--json")
+    done = run(
+        "decide", heavy, "--memory-limit", "16", "--frame", "cartesian", "--time-limit", "60", "--json"
+    )
     assert done.returncode == 3
     assert "limit" in json.loads(done.stdout)["reason"]
 

@@ -24,7 +24,11 @@ def parts() -> dict[str, str]:
     done = subprocess.run(
         [sys.executable, "-m", "surdwise", "decide", EXAMPLE], capture_output=True, text=True, cwd=ROOT
     )
-    return {"sheet": _indented(sheet), "output": _indented(done.stdout), "reference": "\n" + markdown() + "\n"}
+    return {
+        "sheet": _indented(sheet),
+        "output": _indented(done.stdout),
+        "reference": "\n" + markdown() + "\n",
+    }
 
 
 def _indented(text: str) -> str:

@@ -87,10 +87,7 @@ def sign_product(t: Thesis, tick: Callable[[], None] = lambda: None) -> tuple[Po
             continue
         a, b = ring.coefficients(p, g.slot)
         last = i == len(gens) - 1
-        if last and a.is_zero():
-            p = b
-        else:
-            p = t.tower.reduce(a * a - b * b * square_of(g))
+        p = b if last and a.is_zero() else t.tower.reduce(a * a - b * b * square_of(g))
         p = ring.primitive(p)
     return (p, *_numbers(t))
 

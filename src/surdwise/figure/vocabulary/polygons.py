@@ -208,7 +208,7 @@ def _about_incircle(b: Builder, quad: tuple[Pt, ...]) -> None:
     touch points, and every tangent length is a tangent.  So tan i, tan j, tan k > 0 are
     parameters, tan l = -tan(i+j+k) > 0 the only condition, and no such quadrilateral is lost.
     """
-    p, q, r, s = quad
+    p, q, r, _s = quad
     t = [b.param(f"tangent length at {x}", positive=True) for x in (p, q, r)]
     x, y, z = t
     last = (x * y * z - x - y - z) * (1 - x * y - y * z - z * x)
