@@ -12,16 +12,17 @@ from fractions import Fraction
 from flint import arb, ctx, fmpq
 
 from . import ring
+from .near import NearBranch
 from .real import Branch
 from .ring import Poly
 from .tower import Element
 
-PREC = 256
+PREC = 512
 _TINY = arb(2) ** -100
 
 
 class Ball:
-    """A real number known to about 77 digits."""
+    """A real number known to about 150 digits."""
 
     __slots__ = ("v",)
 
@@ -84,7 +85,14 @@ def number(x: int | Fraction) -> Ball:
     return Ball(_arb(x))
 
 
-def ball_of(e: Element, branch: Branch) -> Ball:
+def branch_parameters(branch: Branch | NearBranch) -> dict[int, Ball]:
+    """The values of the free parameters at a branch."""
+    if isinstance(branch, NearBranch):
+        return {k: Ball(f(min(PREC, branch.limit))) for k, f in branch.spots.items()}
+    return {k: Ball(arb(v)) for k, v in branch.values.items()}
+
+
+def ball_of(e: Element, branch: Branch | NearBranch) -> Ball:
     """The value of an element at a branch."""
     return Ball(branch.ball(e, PREC))
 

@@ -22,15 +22,21 @@ Enclosure = Callable[[int], arb]
 
 class NearBranch:
     """A branch of a tower over enclosed parameter values (`spots`: index to enclosure at a
-    precision).  Has the reading methods of `real.Branch`."""
+    precision), which solve `system` exactly.  Has the reading methods of `real.Branch`."""
 
-    __slots__ = ("_balls", "gens", "limit", "path", "spots", "values")
+    __slots__ = ("_balls", "gens", "limit", "path", "spots", "system", "values")
 
     def __init__(
-        self, spots: dict[int, Enclosure], limit: int, gens: tuple[Gen, ...] = (), path: tuple[int, ...] = ()
+        self,
+        spots: dict[int, Enclosure],
+        limit: int,
+        system: tuple[Poly, ...],
+        gens: tuple[Gen, ...] = (),
+        path: tuple[int, ...] = (),
     ) -> None:
         self.spots = spots
         self.limit = limit
+        self.system = system
         self.gens = gens
         self.path = path
         self.values: dict[int, Rational] = {}
@@ -93,10 +99,12 @@ class NearBranch:
         return out
 
 
-def near_branches(tower: Tower, spots: dict[int, Enclosure], limit: int) -> list[NearBranch]:
+def near_branches(
+    tower: Tower, spots: dict[int, Enclosure], limit: int, system: tuple[Poly, ...]
+) -> list[NearBranch]:
     """All real branches over an enclosed point; raises Unsettled where a two-valued step is
     not separated there, or is of higher degree."""
-    out = [NearBranch(spots, limit)]
+    out = [NearBranch(spots, limit, system)]
     for g in tower.gens:
         if g.radicand is None:
             raise Unsettled("a step of higher degree over an algebraic point")
@@ -109,7 +117,7 @@ def near_branches(tower: Tower, spots: dict[int, Enclosure], limit: int) -> list
                     raise Unsettled("a discriminant is not separated from zero")
                 if s < 0:
                     continue
-            nxt += [NearBranch(spots, limit, (*b.gens, g), (*b.path, c)) for c in signs]
+            nxt += [NearBranch(spots, limit, system, (*b.gens, g), (*b.path, c)) for c in signs]
         out = nxt
     return out
 

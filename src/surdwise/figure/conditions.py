@@ -222,8 +222,12 @@ def _is_isosceles(j: Judge, tri: tuple[Pt, ...], apex: Pt) -> bool:
 
 
 def _frame_sign(j: Judge, p: Any, op: str) -> bool:
-    """A comparison of a polynomial in the frame's parameters with zero."""
-    e = j.polynomial(p)
+    """A comparison of a polynomial in the frame's parameters with zero; false where a parameter
+    has no value, at the one position that a parametrisation leaves out."""
+    try:
+        e = j.polynomial(p)
+    except KeyError:
+        return False
     if op == "=":
         return j.zero(e)
     return j.sign(e) == (1 if op == ">" else -1)

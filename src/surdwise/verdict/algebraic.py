@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
+from ..field.near import NearBranch
 from ..field.real import Unsettled
 from ..field.tower import Element
 from ..figure.component import Component
@@ -68,6 +69,8 @@ def _literal(part: Part, place: Place) -> bool:
 
 
 def _sign(place: Place, e: Element) -> int:
+    if isinstance(place.branch, NearBranch):
+        raise ValueError("an enclosed point")
     if len(e.tower.gens) > len(place.comp.tower.gens):
         raise ValueError("a length beyond the place's tower")
     return place.branch.sign(Element(place.comp.tower, e.num, e.den))

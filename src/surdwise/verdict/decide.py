@@ -6,9 +6,10 @@ import time
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 
-from ..field import exact, roots
+from ..field import exact, ring, roots
 from ..field.cells import TooManyCells, never_zero
-from ..field.real import Branch, Unsettled
+from ..field.near import NearBranch
+from ..field.real import Branch, Unsettled, branches
 from ..field.ring import PARAM_NAMES, TooLarge, is_constant
 from ..field.tower import Element
 from ..figure.component import Component
@@ -188,29 +189,61 @@ def verdict_of(places: Sequence[Place], i: int) -> Verdict:
     return Verdict.FAILS
 
 
-def figure(p: Place) -> Figure:
-    """The witness figure of a place."""
+def figure(prog: Program, p: Place) -> Figure | None:
+    """The witness figure of a place; None if its exact coordinates are out of reach."""
+    comp, branch = p.comp, p.branch
+    if isinstance(branch, NearBranch):
+        same = exactly_there(prog, comp, branch)
+        if same is None:
+            return None
+        comp, branch = same
     return {
         n: PlacedPoint(
-            (exact.text(v.x, p.branch), exact.text(v.y, p.branch)),
-            (p.branch.approx(v.x), p.branch.approx(v.y)),
+            (exact.text(v.x, branch), exact.text(v.y, branch)), (branch.approx(v.x), branch.approx(v.y))
         )
-        for n, v in p.comp.points.items()
+        for n, v in comp.points.items()
     }
 
 
-def witness(places: Sequence[Place], i: int, value: bool) -> Figure | None:
+WITNESS_DEGREE = 24
+
+
+def exactly_there(prog: Program, comp: Component, near: NearBranch) -> tuple[Component, Branch] | None:
+    """The figure of an enclosed point over the number field of its coordinates: the equations
+    of the point are solved exactly and the one figure within the enclosure is taken."""
+    if max(p.total_degree() for p in near.system) > WITNESS_DEGREE:
+        return None
+    wanted = {n: (near.ball(v.x, 128), near.ball(v.y, 128)) for n, v in comp.points.items()}
+    fit = []
+    equations = [ring.primitive(p) for p in near.system]
+    for c in prog.run(equations).components:
+        if c.free:
+            continue
+        for b in branches(c.ground(), {}):
+            here = {n: (b.ball(v.x, 128), b.ball(v.y, 128)) for n, v in c.points.items()}
+            if all(here[n][i].overlaps(wanted[n][i]) for n in wanted for i in (0, 1)):
+                fit.append((c, b))
+    return fit[0] if len(fit) == 1 else None
+
+
+def witness(prog: Program, places: Sequence[Place], i: int, value: bool) -> Figure | None:
     """A figure with the given truth: of full dimension if possible, then the plainest."""
     fit = [p for p in places if p.truths[i] == value]
     if not fit:
         return None
     top = max(p.dimension for p in fit)
     best = sorted((p for p in fit if p.dimension == top), key=lambda p: _plainness(p.branch))[:6]
-    figures = [figure(p) for p in best]
+    if isinstance(best[0].branch, NearBranch):
+        best = best[:1]
+    figures = [f for f in (figure(prog, p) for p in best) if f is not None]
+    if not figures:
+        return None
     return min(figures, key=lambda f: sum(len(q.exact[0]) + len(q.exact[1]) for q in f.values()))
 
 
-def _plainness(b: Branch) -> int:
+def _plainness(b: Branch | NearBranch) -> int:
+    if isinstance(b, NearBranch):
+        return 1000 + sum(p.total_degree() for p in b.system)
     return 40 * len(b.path) + sum(len(str(v)) for v in b.values.values())
 
 
@@ -257,7 +290,11 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     )
     if verdict is Verdict.EMPTY:
         return replace(out, reason=_why_empty(case, found))
-    out = replace(out, holds_at=witness(found.places, 0, True), fails_at=witness(found.places, 0, False))
+    out = replace(
+        out,
+        holds_at=witness(case.program, found.places, 0, True),
+        fails_at=witness(case.program, found.places, 0, False),
+    )
     side: AlgebraicSide | None = None
     if is_equality(claim):
         assert isinstance(claim, (Comparison, Relation))
@@ -325,8 +362,8 @@ def _explained(
                     v,
                     where[i] if v in (Verdict.CONDITIONAL, Verdict.FAILS) else None,
                     same,
-                    witness(found.places, i, True),
-                    witness(found.places, i, False),
+                    witness(case.program, found.places, i, True),
+                    witness(case.program, found.places, i, False),
                 )
             )
         out = replace(out, links=tuple(links))
@@ -338,7 +375,7 @@ def _explained(
                 show(c),
                 where[n + i],
                 exact_[n + i],
-                witness(found.places, n + i, True),
+                witness(case.program, found.places, n + i, True),
                 i == written,
                 () if side is None else side.admitting(comps),
             )
@@ -440,7 +477,7 @@ def _degenerate(found: Survey) -> tuple[str, ...]:
                 if real and g.words not in words:
                     words.append(g.words)
     words += [w for w in sorted(found.undefined) if w not in words]
-    words += [f"{w}: not examined" for w in found.not_examined]
+    words += [f"{w}: not examined" for w in dict.fromkeys(found.not_examined)]
     return tuple(words)
 
 

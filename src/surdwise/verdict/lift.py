@@ -137,10 +137,10 @@ def lift(
     def judged(points: Iterator[Point], limit: int) -> bool:
         """Judge points into `out`; False if one stays unsettled."""
         settled = True
-        for dimension, spots, sides in points:
+        for dimension, spots, sides, system in points:
             tick()
             try:
-                for branch in near_branches(comp.ground(), spots, limit):
+                for branch in near_branches(comp.ground(), spots, limit, system):
                     truths = _judged(LiftSpot(comp, branch, sides), conditions, statements)
                     if truths is not None:
                         out.append(Lifted(dimension, branch, truths))
@@ -205,10 +205,10 @@ def _roots(comp: Component, register: Register, g: Poly, k: int) -> Iterator[Poi
         lower, higher = [q for q in picks if root > q], [q for q in picks if root < q]
         if not lower or not higher or len(lower) + len(higher) != len(picks):
             raise Unsettled("a zero is not separated from its neighbours")
-        yield 0, {k: root_enclosure(line, i)}, ({k: max(lower)}, {k: min(higher)})
+        yield 0, {k: root_enclosure(line, i)}, ({k: max(lower)}, {k: min(higher)}), (g,)
 
 
-Point = tuple[int, dict[int, Enclosure], tuple[dict[int, Rational], ...]]
+Point = tuple[int, dict[int, Enclosure], tuple[dict[int, Rational], ...], tuple[Poly, ...]]
 
 
 @dataclass(frozen=True)
@@ -299,7 +299,7 @@ def _arcs(plan: Plan) -> Iterator[Point]:
                 if not lower or not higher or len(lower) + len(higher) != len(picks):
                     raise Unsettled("an arc is not separated from its neighbours")
                 sides = ({u: s, v: max(lower)}, {u: s, v: min(higher)})
-                yield 1, {u: exactly(s), v: root_enclosure(f, i)}, sides
+                yield 1, {u: exactly(s), v: root_enclosure(f, i)}, sides, (g, ring.param(u) - s)
 
 
 def _critical(plan: Plan, h: Poly, width: int) -> Iterator[Point]:
@@ -323,7 +323,7 @@ def _critical(plan: Plan, h: Poly, width: int) -> Iterator[Point]:
             spoken = {_crossing(g, q, boxes, plan, at, width) for q in met}
             for k, box in enumerate(boxes):
                 if k not in spoken:
-                    yield 0, {u: at, v: fixed(box)}, ()
+                    yield 0, {u: at, v: fixed(box)}, (), (g, h)
 
 
 def _crossing(g: Poly, q: Poly, boxes: list[Any], plan: Plan, at: Enclosure, width: int) -> int | None:

@@ -13,7 +13,8 @@ from fractions import Fraction
 from typing import Any
 
 from ..field import cells, ring, roots
-from ..field.ball import ball_of, number, polynomial
+from ..field.ball import ball_of, branch_parameters, number, polynomial
+from ..field.near import NearBranch
 from ..field.real import Branch, Unsettled
 from ..field.ring import Poly
 from ..field.tower import Element
@@ -179,7 +180,10 @@ class Spot(Judge):
             raise Undefined(words)
 
     def polynomial(self, p: Poly) -> Element:
-        """A polynomial of the frame's parameters."""
+        """A polynomial of the frame's parameters; KeyError for one without a value here."""
+        for k in ring.params_in(p):
+            if k not in self.comp.free and k not in self.comp.values:
+                raise KeyError(k)
         return plug(p, Base(self.comp.tower, self.comp.values))
 
     def admitted(self, conditions: Sequence[Callable[[Judge], bool]]) -> bool:
@@ -204,7 +208,7 @@ class Hint(Judge):
     """A judge that guesses: the whole figure in balls, tiny balls about zero taken for zero.
     For proposals that are proved afterwards, never for a verdict."""
 
-    def __init__(self, comp: Component, branch: Branch) -> None:
+    def __init__(self, comp: Component, branch: Branch | NearBranch) -> None:
         def vec(v: Vec) -> Vec:
             return Vec(ball_of(v.x, branch), ball_of(v.y, branch))  # type: ignore[arg-type]
 
@@ -217,7 +221,7 @@ class Hint(Judge):
                 curves[n] = Round(vec(c.centre), ball_of(c.radius2, branch), vec(c.start))  # type: ignore[arg-type]
         self.comp = Component(comp.tower, {}, (), points, curves)
         self._kept: dict[object, Any] = {}
-        self.parameters = {k: number(_fraction(v)) for k, v in branch.values.items()}
+        self.parameters = branch_parameters(branch)
         self.parameters.update({k: ball_of(e, branch) for k, e in comp.values.items()})
 
     def kept(self, name: object, make: Callable[[], Any]) -> Any:
@@ -267,7 +271,3 @@ class Hint(Judge):
     def polynomial(self, p: Poly) -> Any:
         """A polynomial of the frame's parameters."""
         return polynomial(p, self.parameters)
-
-
-def _fraction(v: Any) -> Fraction:
-    return Fraction(int(v.p), int(v.q))

@@ -13,6 +13,7 @@ from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass, field
 
 from ..field import cells, ring
+from ..field.near import NearBranch
 from ..field.real import Branch, Unsettled, branches
 from ..field.ring import Poly
 from ..figure.component import Component
@@ -37,7 +38,7 @@ class Place:
 
     dimension: int
     comp: Component
-    branch: Branch
+    branch: Branch | NearBranch
     truths: tuple[bool | None, ...]
     depth: int
 
@@ -157,8 +158,7 @@ class Surveyor:
             comp, register, curves, exact, order, self.conditions, self.statements, self.tick
         )
         self.result.places += [
-            Place(x.dimension, comp, x.branch, x.truths, depth + 2 - x.dimension)  # type: ignore[arg-type]
-            for x in found
+            Place(x.dimension, comp, x.branch, x.truths, depth + 2 - x.dimension) for x in found
         ]
         if not complete:
             names = ", ".join(f"degree {p.total_degree()}" for p in curves)
