@@ -7,7 +7,7 @@ from itertools import product
 
 import pytest
 from flint import fmpq
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from surdwise.field import ring, roots
@@ -15,9 +15,7 @@ from surdwise.field.real import simplest_between
 from surdwise.field.ring import Poly
 from surdwise.field.tower import Element, Tower
 
-from .made import elements_of, families, polynomials
-
-quick = settings(max_examples=60, deadline=None, suppress_health_check=list(HealthCheck))
+from .made import elements_of, families, polynomials, quick
 
 
 def same(a: Element, b: Element) -> bool:

@@ -7,14 +7,14 @@ from typing import Any
 
 import pytest
 import sympy as sp  # type: ignore[import-untyped]
-from hypothesis import HealthCheck, given, settings
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from surdwise.field import ring, roots
 from surdwise.field.ring import Poly
 from surdwise.field.tower import Element, ElementPoly, Tower, poly_divmod, poly_gcd, poly_mul
 
-from .made import elements_of, families, towers
+from .made import elements_of, families, quick, towers
 from .outside import Radicals, expression, factors, needs_singular, parsed, same_zeros, script, singular
 
 X = sp.Symbol("x")
@@ -119,7 +119,7 @@ def test_a_square_root_over_a_cubic_over_a_square_root() -> None:
     assert p == ring.constant(-8)
 
 
-@settings(max_examples=40, deadline=None, suppress_health_check=list(HealthCheck))
+@settings(parent=quick, max_examples=40)
 @given(st.data())
 def test_a_product_gives_its_factors_back(data: st.DataObject) -> None:
     """(x - a)^2 (x^2 - b): the roots are found with their multiplicities, the product is whole."""
@@ -134,7 +134,7 @@ def test_a_product_gives_its_factors_back(data: st.DataObject) -> None:
         assert poly_divmod(f, h)[1] == []
 
 
-@settings(max_examples=40, deadline=None, suppress_health_check=list(HealthCheck))
+@settings(parent=quick, max_examples=40)
 @given(families(4, steps=2))
 def test_gcd_of_products(case: tuple[Tower, list[Element]]) -> None:
     t, (a, b, c, d) = case
@@ -211,7 +211,7 @@ def _tower(squares: list[str]) -> Tower:
 def _poly(text: str) -> Poly:
     """A polynomial in the parameters from its text."""
     names = {f"u{k}": ring.param(k) for k in range(2)}
-    return eval(text.replace("^", "**"), {}, names) * ring.ONE  # noqa: S307
+    return eval(text.replace("^", "**"), {}, names) * ring.ONE
 
 
 @needs_singular

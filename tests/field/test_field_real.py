@@ -8,7 +8,7 @@ import mpmath  # type: ignore[import-untyped]
 import pytest
 import sympy as sp  # type: ignore[import-untyped]
 from flint import ctx, fmpq, fmpz_poly
-from hypothesis import HealthCheck, assume, given, settings
+from hypothesis import assume, given
 from hypothesis import strategies as st
 
 from surdwise.field import ball, exact, ring, roots
@@ -17,10 +17,9 @@ from surdwise.field.real import Branch, Unsettled, branches, isolate
 from surdwise.field.ring import Poly
 from surdwise.field.tower import Element, Tower
 
-from .made import families
+from .made import families, quick
 
 DIGITS = 60
-quick = settings(max_examples=60, deadline=None, suppress_health_check=list(HealthCheck))
 
 
 def value(p: Poly, point: dict[int, Any]) -> Any:

@@ -13,7 +13,7 @@ from flint import arb, ctx, fmpq
 
 from . import ring
 from .near import NearBranch
-from .real import Branch
+from .real import Branch, simplest_between
 from .ring import Poly
 from .tower import Element
 
@@ -95,6 +95,19 @@ def branch_parameters(branch: Branch | NearBranch) -> dict[int, Ball]:
 def ball_of(e: Element, branch: Branch | NearBranch) -> Ball:
     """The value of an element at a branch."""
     return Ball(branch.ball(e, PREC))
+
+
+def between(a: Ball, b: Ball) -> fmpq | None:
+    """A plain rational strictly between two numbers, or None if they are not told apart."""
+    if a.v > b.v:
+        a, b = b, a
+    if not a.v < b.v:
+        return None
+    low, high = (
+        fmpq(Fraction(float(x.v.mid())).numerator, Fraction(float(x.v.mid())).denominator) for x in (a, b)
+    )
+    value = simplest_between(low, high) if low < high else None
+    return value if value is not None and a.v < arb(value) < b.v else None
 
 
 def polynomial(p: Poly, values: dict[int, Ball]) -> Ball:

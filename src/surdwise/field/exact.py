@@ -133,6 +133,19 @@ def _as_root(e: Element, branch: Branch) -> str:
     raise ArithmeticError("no factor of the norm vanishes at the value")
 
 
+def _in_x(cs: list[int]) -> str:
+    """A polynomial in x from its ascending coefficients."""
+    out = ""
+    for i, c in reversed(list(enumerate(cs))):
+        if c:
+            size = "" if abs(c) == 1 and i else str(abs(c))
+            power = "" if i == 0 else "x" if i == 1 else f"x**{i}"
+            body = size + ("*" if size and power else "") + power
+            sign = (" - " if c < 0 else " + ") if out else ("-" if c < 0 else "")
+            out += sign + body
+    return out
+
+
 def _which(f: Poly, slot: int, e: Element, branch: Branch) -> str | None:
     """Text of the root of f that equals e at the branch; None if f does not vanish there."""
     u = ring.univariate(f, slot)
@@ -147,7 +160,6 @@ def _which(f: Poly, slot: int, e: Element, branch: Branch) -> str | None:
             cs = [int(c) for c in u.coeffs()]
             if len(cs) == 2:
                 return str(fmpq(-cs[0], cs[1]))
-            body = " + ".join(f"({c})*x**{i}" for i, c in enumerate(cs) if c)
-            return f"CRootOf({body}, {near[0]})"
+            return f"CRootOf({_in_x(cs)}, {near[0]})"
         prec *= 2
     return None

@@ -16,7 +16,7 @@ def norm_step(p: Poly, tower: Tower, k: int) -> Poly:
     """Norm of a ring element over step k: a^2 - d b^2 for a square root, else a resultant."""
     g = tower.gens[k]
     if p.degrees()[g.slot] <= 0:
-        return p**g.degree
+        return tower.reduce(p**g.degree)
     if g.radicand is not None:
         a, b = ring.coefficients(p, g.slot)
         return tower.reduce(a * a - b * b * g.radicand)
@@ -232,7 +232,7 @@ def _norm_with(p: Poly, tower: Tower, k: int) -> Poly:
     g = tower.gens[k]
     low = tower.lower(k)
     if p.degrees()[g.slot] <= 0:
-        return p**g.degree
+        return low.reduce(p**g.degree)
     if g.radicand is not None:
         a, b = ring.coefficients(p, g.slot)
         return low.reduce(a * a - b * b * g.radicand)

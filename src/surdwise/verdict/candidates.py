@@ -194,7 +194,7 @@ def _lengths_compared(
         yield Candidate(Comparison((one_l, two_l), ("=",)), 1.3 + extra)
         yield Candidate(Comparison((one_l, two_l), ("<",)), 1.3 + extra)
         yield Candidate(Comparison((one_l, two_l), (">",)), 1.3 + extra)
-    for k in numbers:
+    for k in sorted(numbers | {Fraction(1, 2)}):
         for one, two in permutations(pairs, 2):
             if len({one[0].name, one[1].name, two[0].name, two[1].name}) == 4 and len(pairs) > 6:
                 continue

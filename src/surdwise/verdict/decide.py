@@ -7,6 +7,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 
 from ..field import exact, ring, roots
+from ..field.ball import between, branch_parameters
 from ..field.cells import TooManyCells, never_zero
 from ..field.near import NearBranch
 from ..field.real import Branch, Unsettled, branches
@@ -127,11 +128,31 @@ class Case:
                 wrong = [p for p in proof.places if not p.truths[k]]
                 bad = [p for p in wrong if p.dimension == full] if i in rough else wrong
                 if bad:
-                    pools[i] = [*pools[i], *((p, bool(p.truths[len(keys) + k])) for p in bad[:30])]
+                    news = [(p, bool(p.truths[len(keys) + k])) for p in bad[:30]]
+                    lexicon.extend(separators(news, pools[i]))
+                    pools[i] = [*pools[i], *news]
                 else:
                     answers[i] = Name(guesses[i], not wrong)
                     open_.discard(i)
         return answers
+
+
+def separators(bad: Sequence[tuple[Place, bool]], pool: Sequence[tuple[Place, bool]]) -> list[Candidate]:
+    """Comparisons of one parameter with a rational that tell places apart which the figure's
+    words and the borders' signs do not."""
+    out: dict[str, Candidate] = {}
+    for p, t in bad[:6]:
+        here = branch_parameters(p.branch)
+        for q, s in pool:
+            there = branch_parameters(q.branch) if s != t else {}
+            for k in here.keys() & there.keys():
+                value = between(here[k], there[k])
+                if value is not None and len(out) < 40:
+                    f = ring.primitive(ring.param(k) - value)
+                    for op in (">", "<"):
+                        relation = Relation("frame_sign", (f, op))  # type: ignore[arg-type]
+                        out[f"{ring.key(f)} {op}"] = Candidate(relation, 5.0)
+    return list(out.values())
 
 
 @dataclass(frozen=True)

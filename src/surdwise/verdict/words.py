@@ -40,6 +40,14 @@ class Lexicon:
         self.cands = list(cands)
         self._rows: dict[int, tuple[Place, tuple[bool | None, ...]]] = {}
 
+    def extend(self, cands: Iterable[Candidate]) -> None:
+        """Learn more candidate conditions."""
+        known = {str(c.condition) for c in self.cands}
+        more = [c for c in cands if str(c.condition) not in known]
+        if more:
+            self.cands += more
+            self._rows.clear()
+
     def row(self, p: Place) -> tuple[bool | None, ...]:
         """Truth of every candidate at a place; None where undefined or too near to guess."""
         if id(p) not in self._rows:
