@@ -98,7 +98,9 @@ SPACE: dict[str, list[Poly]] = {
 @pytest.mark.parametrize("order", [[0, 1], [1, 0]])
 @pytest.mark.parametrize("positive", [ANY, frozenset({0}), frozenset({1}), frozenset({0, 1})])
 @pytest.mark.parametrize("name", PLANE)
-def test_every_sign_vector_of_the_plane_is_found(name: str, positive: frozenset[int], order: list[int]) -> None:
+def test_every_sign_vector_of_the_plane_is_found(
+    name: str, positive: frozenset[int], order: list[int]
+) -> None:
     polys = PLANE[name]
     samples = list(cells.open_cells(polys, order, positive))
     found = {vector(polys, s) for s in samples}

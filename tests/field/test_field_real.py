@@ -45,10 +45,7 @@ def points(t: Tower, sample: dict[int, Any]) -> list[dict[int, Any]]:
                 q = value(g.radicand, p)
                 if q > 0:
                     s = mpmath.sqrt(q)
-                    if g.choice == "positive":
-                        found = [s if value(g.orient, p) > 0 else -s]
-                    else:
-                        found = [-s, s]
+                    found = [-s, s] if g.choice == "either" else [s if value(g.orient, p) > 0 else -s]
                 else:
                     found = []
             else:
@@ -64,6 +61,11 @@ def near(b: Any, x: Any) -> bool:
     """Whether a ball's middle is a number to 30 digits, relative to its size."""
     mid = mpmath.mpf(b.mid().str(DIGITS, radius=False))
     return bool(abs(mid - x) < mpmath.mpf(10) ** -30 * (1 + abs(x)))
+
+
+def printed(e: Element, branch: Branch) -> Any:
+    """The exact text of an element, evaluated by SymPy."""
+    return mpmath.mpmathify(sp.sympify(exact.text(e, branch)).evalf(45))
 
 
 @quick
@@ -160,7 +162,8 @@ def test_a_sample_on_a_border_is_refused() -> None:
 
 
 @pytest.mark.parametrize(
-    "cs", [[-2, 0, 0, 1], [1, -3, 0, 1], [-1, 3, -3, 1], [-5, 0, 1, 0, 0, 1], [1, 0, -10, 0, 1], [6, -5, -2, 1]]
+    "cs",
+    [[-2, 0, 0, 1], [1, -3, 0, 1], [-1, 3, -3, 1], [-5, 0, 1, 0, 0, 1], [1, 0, -10, 0, 1], [6, -5, -2, 1]],
 )
 def test_isolated_roots_are_sympys(cs: list[int]) -> None:
     x = sp.Symbol("x")
@@ -179,12 +182,12 @@ def test_texts_of_general_roots_are_sympys_numbered_roots(n: int) -> None:
     for branch in branches(t, {}):
         for e in (g, g * g - 3, 1 / (g + 1), g / 2 + g * g / 3):
             with ctx.workprec(200), mpmath.workdps(50):
-                assert near(branch.ball(e, 200), mpmath.mpmathify(sp.sympify(exact.text(e, branch)).evalf(45)))
+                assert near(branch.ball(e, 200), printed(e, branch))
     longer, r = t.adjoin_sqrt(g * g + 1, "positive", "")
     for branch in branches(longer, {}):
         for e in (r, r + g, r * g - 2):
             with ctx.workprec(200), mpmath.workdps(50):
-                assert near(branch.ball(e, 200), mpmath.mpmathify(sp.sympify(exact.text(e, branch)).evalf(45)))
+                assert near(branch.ball(e, 200), printed(e, branch))
 
 
 @quick
@@ -200,8 +203,7 @@ def test_texts_of_nested_roots(case: tuple[Tower, list[Element]], a: int) -> Non
         if ring.value_of(branch.at_sample(e.den)) == 0:
             continue
         with ctx.workprec(200), mpmath.workdps(50):
-            x = sp.sympify(exact.text(e, branch)).evalf(45)
-            assert near(branch.ball(e, 200), mpmath.mpmathify(x))
+            assert near(branch.ball(e, 200), printed(e, branch))
 
 
 def test_signs_known_at_a_glance() -> None:
