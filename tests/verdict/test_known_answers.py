@@ -166,6 +166,15 @@ def test_four_components_of_three_apexes() -> None:
     assert sum(c.status == "generally true" for c in d.components) == 2
 
 
+def test_witness_keeps_off_excluded_places() -> None:
+    """A figure handed out once had D on A: the sample lay on a place that the shape excludes."""
+    (sheet,) = read("given quadrilateral ABCD\ngiven M = midpoint of AB\nclaim 2|AM| = |AB|\n")
+    (d,) = decide(sheet)
+    assert d.holds_at is not None
+    spots = [p.exact for n, p in d.holds_at.items() if n in "ABCD"]
+    assert len(set(spots)) == 4
+
+
 def test_chain_has_links() -> None:
     """r <= R/2 <= R: two links, one with equality for equilateral triangles, one never equal."""
     (sheet,) = read("given triangle ABC\nclaim inradius(ABC) <= circumradius(ABC)/2 < circumradius(ABC)\n")

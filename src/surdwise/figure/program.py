@@ -165,9 +165,13 @@ def orientations(c: Component) -> dict[str, Poly]:
     return {n: p for n, p in out.items() if not cells.never_zero(p, c.positive)}
 
 
-def radicands(c: Component) -> dict[str, Poly]:
-    """Irreducible factors of the norms of the squares of lengths that the figure is built on."""
+def special_places(c: Component) -> dict[str, Poly]:
+    """Irreducible polynomials that no sample should be a zero of: where points coincide that must
+    not, or a length that the figure is built on vanishes."""
     out: dict[str, Poly] = {}
+    for r in c.requires:
+        if r.op == "!=":
+            out.update(roots.norm_factors(Element(c.tower, r.element.num, r.element.den)))
     for step in c.tower.gens:
         if step.choice == "positive" and step.radicand is not None and not ring.is_constant(step.radicand):
             out.update(roots.norm_factors(Element(c.tower, step.radicand, ring.ONE)))

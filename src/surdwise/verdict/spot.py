@@ -178,6 +178,8 @@ class Spot(Judge):
         d = square(a - b)
         if d.is_zero():
             raise Undefined(words)
+        if not d.is_rational():
+            self._enter("avoid", d)
 
     def polynomial(self, p: Poly) -> Element:
         """A polynomial of the frame's parameters; KeyError for one without a value here."""

@@ -18,7 +18,7 @@ from ..field.real import Branch, Unsettled, branches
 from ..field.ring import Poly
 from ..figure.component import Component
 from ..figure.conditions import Judge
-from ..figure.program import Program, Run, orientations, radicands
+from ..figure.program import Program, Run, orientations, special_places
 from .lift import heavy, lift
 from .spot import Register, Spot, Undefined
 
@@ -109,7 +109,7 @@ class Surveyor:
             register = Register()
             register.enter("figure", borders)
             register.enter("fold", orientations(comp))
-            register.enter("avoid", radicands(comp))
+            register.enter("avoid", special_places(comp))
             before = len(self.result.places)
             self._component(comp, register, depth)
             found = self.result.places[before:]

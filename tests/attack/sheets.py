@@ -1,0 +1,5 @@
+"""Sheets for the attack: plain text, with the theorem behind each in a comment."""
+
+from __future__ import annotations
+
+SHEETS: tuple[str, ...] = ()

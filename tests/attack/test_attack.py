@@ -1,0 +1,33 @@
+"""Every example and every sheet of sheets.py against random real figures; see judge.py."""
+
+from __future__ import annotations
+
+from pathlib import Path
+
+import pytest
+
+from surdwise import Sheet, decide
+from surdwise.sheet import read_file, read_text
+from surdwise.sheet.tree import Fact
+
+from .judge import complaints
+from .sheets import SHEETS
+
+EXAMPLES = Path(__file__).parents[2] / "examples"
+
+
+def all_sheets() -> list[tuple[str, Sheet]]:
+    out = [(p.name, s) for p in sorted(EXAMPLES.glob("*.claim")) for s in read_file(p)]
+    for text in SHEETS:
+        for s in read_text(text.strip() + "\n", "sheets.py"):
+            out.append((s.title, s))
+    return out
+
+
+@pytest.mark.parametrize("sheet", [pytest.param(s, id=name) for name, s in all_sheets()])
+def test_decisions(sheet: Sheet) -> None:
+    constrained = any(not isinstance(line.body, Fact) for line in sheet.given)
+    n = 600 if constrained else 10_000
+    for i, d in enumerate(decide(sheet, time_limit=30)):
+        found = complaints(sheet, i, d, n)
+        assert not found, (d.claim, d.verdict.value, d.condition, found[:4])
