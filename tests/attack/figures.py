@@ -979,7 +979,7 @@ def random_figures(sheet: Sheet, n: int, seed: int) -> Drawing:
         for line in sheet.provided:
             g.ok = g.ok & (measure.truth(line.body, g) == 1)
         for z in g.points.values():
-            g.ok = g.ok & np.isfinite(z) & (np.abs(z) < 1e5)
+            g.ok = g.ok & np.isfinite(z) & (np.abs(z) < 1e3)
     return g
 
 
@@ -1000,7 +1000,7 @@ def _solve(g: Drawing, sheet: Sheet, steps: int = 40) -> None:
         jac = _jacobian(g, sheet, theta)
         jt = np.transpose(jac, (0, 2, 1))
         a = jt @ jac
-        a += (damp[:, None, None] + 1e-15) * np.eye(a.shape[1])
+        a += (damp[:, None, None] + 1e-13) * (1 + np.trace(a, axis1=1, axis2=2))[:, None, None] * np.eye(a.shape[1])
         step = np.linalg.solve(a, jt @ f[:, :, None])[:, :, 0]
         new = theta - np.clip(step, -1.0, 1.0)
         fn = np.nan_to_num(_residuals(g, sheet, new), nan=1e6, posinf=1e6, neginf=-1e6)

@@ -38,22 +38,23 @@ def value(q: Any, g: Any) -> Pair:
             return abs(x), s
         sg = ops.sign(x, s)
         x = ops.where(sg == 0, 0 * x, x)
-        return ops.sqrt(x), ops.sqrt(s)
+        root = ops.sqrt(x)
+        return root, ops.where(sg == 1, s / ops.where(sg == 1, root, 1), ops.sqrt(s))
     assert isinstance(q, Binary)
     x, s = value(q.left, g)
     if q.op == "^":
         n = _exponent(q.right)
         if n >= 0:
-            return x**n, s**n if n else 1 + 0 * s
+            return x**n, n * abs(x) ** (n - 1) * s if n else 1 + 0 * s
         x, s = _over(g, (1, 1), (x, s))
-        return x ** (-n), s ** (-n)
+        return x ** (-n), -n * abs(x) ** (-n - 1) * s
     y, t = value(q.right, g)
     if q.op == "+":
         return x + y, s + t
     if q.op == "-":
         return x - y, s + t
     if q.op == "*":
-        return x * y, s * t
+        return _times((x, s), (y, t))
     return _over(g, (x, s), (y, t))
 
 
@@ -90,7 +91,7 @@ def _minus(a: Pair, b: Pair) -> Pair:
 
 
 def _times(a: Pair, b: Pair) -> Pair:
-    return a[0] * b[0], a[1] * b[1]
+    return a[0] * b[0], abs(a[0]) * b[1] + abs(b[0]) * a[1]
 
 
 def _measure(q: Measure, g: Any) -> Pair:

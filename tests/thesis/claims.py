@@ -29,7 +29,7 @@ CLAIMS = [
     "|AC|/|BC| = 2",
     "|AB|/|AC| + |AC|/|AB| = 3",
     "1/|AC| + 1/|BC| = 1/|AB|",
-    "(|AC| + |BC|)/(|AC| - |BC|) = 3",
+    "(|AC| + |BC|)/(|BC| - |AC|) = 3",
     "|AC|/(|AB| + |BC|) = 1/2",
     # areas, radii, altitudes
     "area(ABC) = |AB|*|BC|/2",
@@ -56,7 +56,7 @@ CLAIMS = [
     "bisector(ABC, A) = bisector(ABC, B)",
     "bisector(ABC, A) + altitude(ABC, A) = |AC|",
     "sqrt(|AC|*|BC|) = |AB|",
-    "sqrt(|AC|) + sqrt(|BC|) = sqrt(|AB|)",
+    "sqrt(|AC|) + sqrt(|BC|) = 2*sqrt(|AB|)",
     "sqrt(|AC|*|BC|) + |AD| = |BD|",
     # angles, numeric roots
     "cos(BAC) = 1/3",

@@ -114,6 +114,12 @@ def coefficients(p: Poly, slot: int) -> list[Poly]:
     return [CTX.from_dict(d) for d in parts]
 
 
+def linear_parts(p: Poly, slot: int) -> tuple[Poly, Poly]:
+    """(a, b) with p = a + b x, for p of degree at most one in the variable: b is the derivative."""
+    b = p.derivative(_NAMES[slot])
+    return p - b * _VARS[slot], b
+
+
 def from_coefficients(cs: Sequence[Poly], slot: int) -> Poly:
     """The polynomial sum cs[i] x^i."""
     x = _VARS[slot]

@@ -18,7 +18,7 @@ def norm_step(p: Poly, tower: Tower, k: int) -> Poly:
     if p.degrees()[g.slot] <= 0:
         return tower.reduce(p**g.degree)
     if g.radicand is not None:
-        a, b = ring.coefficients(p, g.slot)
+        a, b = ring.linear_parts(p, g.slot)
         return tower.reduce(a * a - b * b * g.radicand)
     return tower.reduce(g.modulus.resultant(p, ring.GEN_NAMES[k]))
 
@@ -234,6 +234,6 @@ def _norm_with(p: Poly, tower: Tower, k: int) -> Poly:
     if p.degrees()[g.slot] <= 0:
         return low.reduce(p**g.degree)
     if g.radicand is not None:
-        a, b = ring.coefficients(p, g.slot)
+        a, b = ring.linear_parts(p, g.slot)
         return low.reduce(a * a - b * b * g.radicand)
     return low.reduce(g.modulus.resultant(p, ring.GEN_NAMES[k]))

@@ -355,7 +355,7 @@ class Element:
             return _normal(t, self.den, self.num)
         g = t.gens[k]
         if g.radicand is not None:
-            a, b = ring.coefficients(self.num, g.slot)
+            a, b = ring.linear_parts(self.num, g.slot)
             x = ring.gen(k)
             below = t.reduce(a * a - b * b * g.radicand)
             return t.element((a - b * x) * self.den) * Element(t, below, ONE).inverse()

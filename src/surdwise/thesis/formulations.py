@@ -85,7 +85,7 @@ def sign_product(t: Thesis, tick: Callable[[], None] = lambda: None) -> tuple[Po
         tick()
         if p.degrees()[g.slot] <= 0:
             continue
-        a, b = ring.coefficients(p, g.slot)
+        a, b = ring.linear_parts(p, g.slot)
         last = i == len(gens) - 1
         p = b if last and a.is_zero() else t.tower.reduce(a * a - b * b * square_of(g))
         p = ring.primitive(p)
@@ -132,7 +132,7 @@ def minimal(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
         tick()
         if p.degrees()[g.slot] <= 0:
             continue
-        a, b = ring.coefficients(p, g.slot)
+        a, b = ring.linear_parts(p, g.slot)
         p = ring.primitive(field.reduce(a * a - b * b * square_of(g)))
     return (_without_powers(p, field), *(g.modulus for g in field.gens if g.label == "number"))
 

@@ -30,6 +30,7 @@ from .words import Lexicon, in_frame, name, said
 
 PROOF_ROUNDS = 6
 NAMING_PLACES = 120
+NAMING_SECONDS = 20.0
 
 
 def statement(c: Condition) -> Statement:
@@ -129,7 +130,8 @@ class Case:
                 bad = [p for p in wrong if p.dimension == full] if i in rough else wrong
                 if bad:
                     news = [(p, bool(p.truths[len(keys) + k])) for p in bad[:30]]
-                    lexicon.extend(separators(news, pools[i]))
+                    if full <= 2:
+                        lexicon.extend(separators(news, pools[i]))
                     pools[i] = [*pools[i], *news]
                 else:
                     answers[i] = Name(guesses[i], not wrong)
@@ -322,6 +324,7 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
         side = algebraic_side(dominant(found.components), claim, found.places, case.tick)
         out = replace(out, algebraic=side.statuses, components=side.components)
     try:
+        case.deadline = min(case.deadline, time.monotonic() + NAMING_SECONDS)
         out = _explained(case, whats, parts, found, out, side)
     except OutOfTime:
         out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")
