@@ -194,7 +194,7 @@ def _lengths_compared(
         yield Candidate(Comparison((one_l, two_l), ("=",)), 1.3 + extra)
         yield Candidate(Comparison((one_l, two_l), ("<",)), 1.3 + extra)
         yield Candidate(Comparison((one_l, two_l), (">",)), 1.3 + extra)
-    for k in sorted(numbers | {Fraction(1, 2)}):
+    for k in sorted(numbers):
         for one, two in permutations(pairs, 2):
             if len({one[0].name, one[1].name, two[0].name, two[1].name}) == 4 and len(pairs) > 6:
                 continue
@@ -306,7 +306,7 @@ def _lengths(node: object) -> set[tuple[str, str]]:
 
 
 def _constants(sheet: Sheet) -> set[Fraction]:
-    """Ratios written in the hypotheses."""
+    """Ratios written in the sheet, and their reciprocals."""
     out: set[Fraction] = set()
 
     def walk(q: Quantity) -> None:
@@ -320,12 +320,32 @@ def _constants(sheet: Sheet) -> set[Fraction]:
         elif isinstance(q, Unary):
             walk(q.arg)
 
-    for line in sheet.given:
+    for line in (*sheet.given, *sheet.claims):
         if isinstance(line.body, Comparison):
             for item in line.body.items:
                 walk(item)
+            if _repeats(line.body):
+                out.add(Fraction(2))
     out.discard(Fraction(1))
-    return out
+    return out | {1 / k for k in out}
+
+
+def _repeats(c: Comparison) -> bool:
+    """Whether a length is written twice."""
+    seen: list[object] = []
+
+    def walk(q: Quantity) -> None:
+        if isinstance(q, Measure):
+            seen.append(_turned(q))
+        elif isinstance(q, Binary):
+            walk(q.left)
+            walk(q.right)
+        elif isinstance(q, Unary):
+            walk(q.arg)
+
+    for q in c.items:
+        walk(q)
+    return len(seen) != len(set(seen))
 
 
 def negated(c: Condition) -> Condition:
