@@ -19,22 +19,31 @@ SIDES = """(declare-const a Real)(declare-const b Real)(declare-const c Real)
 (assert (> a 0))(assert (> b 0))(assert (= c 1))
 (assert (> (+ a b) c))(assert (> (+ b c) a))(assert (> (+ c a) b))
 """
-MEDIANS = SIDES + """(declare-const p Real)(declare-const q Real)(declare-const r Real)
+MEDIANS = (
+    SIDES
+    + """(declare-const p Real)(declare-const q Real)(declare-const r Real)
 (assert (>= p 0))(assert (>= q 0))(assert (>= r 0))
 (assert (= (* 4 p p) (- (+ (* 2 b b) (* 2 c c)) (* a a))))
 (assert (= (* 4 q q) (- (+ (* 2 c c) (* 2 a a)) (* b b))))
 (assert (= (* 4 r r) (- (+ (* 2 a a) (* 2 b b)) (* c c))))
 """
+)
 # bisector p to side a: p^2 (b+c)^2 = bc((b+c)^2 - a^2)
-BISECTORS = SIDES + """(declare-const p Real)(declare-const q Real)(declare-const r Real)
+BISECTORS = (
+    SIDES
+    + """(declare-const p Real)(declare-const q Real)(declare-const r Real)
 (assert (>= p 0))(assert (>= q 0))(assert (>= r 0))
 (assert (= (* p p (+ b c) (+ b c)) (* b c (- (* (+ b c) (+ b c)) (* a a)))))
 (assert (= (* q q (+ c a) (+ c a)) (* c a (- (* (+ c a) (+ c a)) (* b b)))))
 (assert (= (* r r (+ a b) (+ a b)) (* a b (- (* (+ a b) (+ a b)) (* c c)))))
 """
-AREA = SIDES + """(declare-const s Real)(assert (> s 0))
+)
+AREA = (
+    SIDES
+    + """(declare-const s Real)(assert (> s 0))
 (assert (= (* 16 s s) (* (+ a b c) (- (+ a b) c) (- (+ b c) a) (- (+ c a) b))))
 """
+)
 CASES = [
     ("a + b > c", "given triangle ABC\nclaim |AB| + |BC| > |CA|", SIDES + "(assert (<= (+ a b) c))"),
     (
@@ -69,8 +78,7 @@ CASES = [
     ),
     (
         "altitude sum >= 9r",
-        "given triangle ABC\n"
-        "claim altitude(ABC, A) + altitude(ABC, B) + altitude(ABC, C) >= 9inradius(ABC)",
+        "given triangle ABC\nclaim altitude(ABC, A) + altitude(ABC, B) + altitude(ABC, C) >= 9inradius(ABC)",
         # 2s/a + 2s/b + 2s/c < 18 s/(a+b+c)
         SIDES + "(assert (< (* (+ (* b c) (* c a) (* a b)) (+ a b c)) (* 9 a b c)))",
     ),

@@ -1,7 +1,7 @@
-"""Ratios measured in one run: `python bench/run.py [--peers SECONDS]`.
+"""Measure everything in one run, print tables of ratios, and write results.md next to this file.
 
-Speed is never a timed test; it is judged here, each figure next to a yardstick taken in the
-same run on the same machine.  Writes bench/results.md.
+python bench/run.py                 everything (some minutes)
+python bench/run.py --only startup  one table: startup, norms, growth, sheets
 """
 
 from __future__ import annotations
@@ -10,137 +10,155 @@ import argparse
 import datetime
 import os
 import platform
-import subprocess
 import sys
 import time
+from collections.abc import Callable
+from importlib.metadata import version
 from pathlib import Path
-from statistics import median
 
-from peers import inequality_table
+from measure import ROOT, show, table
 
-from surdwise import Form, decide, read
-from surdwise.thesis.formal import thesis
-from surdwise.thesis.formulations import formulate
-
-ROOT = Path(__file__).parents[1]
-MEDIANS = (
-    "given triangle ABC\n"
-    "claim 2*(2median(ABC, A) + 2median(ABC, B) + 2median(ABC, C)) = 3*(|AB| + |BC| + |CA|)\n"
-)
-# the ideal of the same elimination: squares of the three doubled medians and two sides
-SINGULAR = """
-ring r = 0, (p, q, w, a, b, u, v), dp;
-poly e = 2*(p + q + w) - 3*(a + b + 1);
-ideal i = e, p^2 - (2*u - 1)^2 - 4*v^2, q^2 - (u + 1)^2 - v^2, w^2 - (u - 2)^2 - v^2,
-  a^2 - (u - 1)^2 - v^2, b^2 - u^2 - v^2;
-system("--ticks-per-sec", 1000);
-int t = rtimer;
-ideal j = eliminate(i, p*q*w*a*b);
-print(rtimer - t);
-print(deg(j[1])); print(size(j[1]));
-quit;
-"""
+sys.path.insert(0, str(ROOT / "src"))
 
 
-def process_ratio(runs: int) -> list[str]:
-    """Whole processes, alternating: the three-point sheet against importing its libraries."""
-    env = {k: v for k, v in os.environ.items() if k != "PYTHONDONTWRITEBYTECODE"}
-    ours = [sys.executable, "-m", "surdwise", "decide", "examples/stretched-string.claim"]
-    base = [sys.executable, "-c", "import flint, typer, lark"]
-    times: dict[str, list[float]] = {"ours": [], "base": []}
-    for i in range(runs + 1):
-        for name, command in (("ours", ours), ("base", base)):
-            start = time.perf_counter()
-            subprocess.run(command, cwd=ROOT, env=env, stdout=subprocess.DEVNULL, check=False)
-            if i:
-                times[name].append(time.perf_counter() - start)
-    a, b = median(times["ours"]), median(times["base"])
-    return [
-        "## A small sheet, whole process",
-        "",
-        f"`decide examples/stretched-string.claim`: {a:.3f} s; `import flint, typer, lark`: {b:.3f} s; "
-        f"ratio {a / b:.2f} (medians of {runs} alternating runs; target at most 2.5).",
-        "",
+def startup(options: argparse.Namespace) -> str:
+    """(a) and (e): the whole command."""
+    import startup as s
+
+    command, floor = s.ratio(options.runs)
+    r = command.median / floor.median
+    rows = [
+        ["python -m surdwise decide examples/stretched-string.claim", str(command)],
+        ['python -c "import flint, typer, lark"', str(floor)],
+        ["ratio of medians", f"{r:.2f} (target: at most {s.TARGET})"],
     ]
+    extra, mine, base = s.beyond_the_floor()
+    worst = [[m.name, f"{m.own / 1000:.2f}", f"{m.whole / 1000:.2f}"] for m in extra[:15]]
+    ours = sum(m.own for m in extra if m.name.startswith("surdwise"))
+    rest = sum(m.own for m in extra) - ours
+    return (
+        f"## The whole command\n\nMedians (least .. greatest) of {options.runs} alternating runs, "
+        "bytecode warm.\n\n" + table(["process", "time"], rows) + "\n\n"
+        f"Import times (`-X importtime`, least of 5): {mine / 1000:.0f} ms for the command, "
+        f"{base / 1000:.0f} ms for the imports alone. Modules that only the command imports: "
+        f"{ours / 1000:.1f} ms of its own, {rest / 1000:.1f} ms of others; the slowest:\n\n"
+        + table(["module", "itself, ms", "with its imports, ms"], worst)
+    )
 
 
-def medians_norm() -> list[str]:
-    """The norm of 2(p + q + w) - 3(a + b + 1) against the same elimination in Singular."""
-    (sheet,) = read(MEDIANS)
-    claim = sheet.claims[0].body
-    t = thesis(claim, ["A", "B", "C"], False)  # type: ignore[arg-type]
-    runs = [formulate(t, Form.SIGN_PRODUCT) for _ in range(15)]
-    f = runs[0]
-    ours = median(r.seconds for r in runs)
-    out = ["## The medians' norm", ""]
-    head = f"surdwise: {ours * 1000:.2f} ms, degree {f.degree}, {f.terms} terms"
-    try:
-        start = time.perf_counter()
-        done = subprocess.run(["Singular", "-q"], input=SINGULAR, capture_output=True, text=True, timeout=300)
-        whole = time.perf_counter() - start
-        inside, degree, size = (int(x) for x in done.stdout.split()[:3])
-        out.append(
-            f"{head}; Singular `eliminate` on the same ideal: {inside} ms by its own timer "
-            f"({whole:.2f} s as a process), degree {degree}, {size} terms; "
-            f"ratio {inside / (ours * 1000):.0f} (target at least 100)."
-        )
-    except (OSError, ValueError, subprocess.TimeoutExpired) as e:
-        out.append(f"{head}; Singular gave no figure ({type(e).__name__}).")
-    return [*out, ""]
+def norms(options: argparse.Namespace) -> str:
+    """(b): sign products against eliminations."""
+    import norms as n
+
+    rows = []
+    for name in n.CLAIMS:
+        c = n.contest(name, 5, options.cap)
+        inside = "-" if c.theirs is None else str(c.theirs)
+        whole = "-" if c.whole_theirs is None else str(c.whole_theirs)
+        if c.theirs is not None and c.whole_theirs is not None:
+            r = [c.theirs.median / c.mine.median, c.whole_theirs.median / c.whole_mine.median]
+            ratios = [f"{x:.1f}" for x in r]
+        elif n.PROGRAM is None:
+            ratios = ["-", "-"]
+        else:
+            inside = whole = f"over {options.cap:.0f} s"
+            ratios = [
+                f"over {options.cap / c.mine.median:.0f}",
+                f"over {options.cap / c.whole_mine.median:.0f}",
+            ]
+        rows.append([name, str(c.terms), str(c.mine), inside, ratios[0], str(c.whole_mine), whole, ratios[1]])
+    head = ["claim", "terms", "sign product", "eliminate", "ratio", "process", "Singular process", "ratio"]
+    claims = "\n".join(f"- {name}: `{claim}`" for name, claim in n.CLAIMS.items())
+    return (
+        "## Sign products and eliminations\n\nThe sign product here, and Singular's `eliminate` of the "
+        "lengths from the auxiliary ideal of the same claim (degree reverse lexicographic order). Times inside "
+        "each system, Singular's by its own clock `rtimer` (wall time, in milliseconds), short ones over 50 "
+        f"repetitions; then whole processes. Target for the medians, inside: {n.TARGET:.0f}.\n\n{claims}\n\n"
+        + table(head, rows)
+    )
 
 
-def growth() -> list[str]:
-    """Sign products of sums of r independent distances in d parameters: seconds, terms, and the
-    time of one multiplication that writes a polynomial of that size."""
-    rows = ["## Growth of the sign product", "", "| radicals | parameters | terms | seconds | per term |"]
-    rows.append("| --- | --- | --- | --- | --- |")
-    for d, points in ((2, "ABC"), (4, "ABCD")):
-        pairs = [(x, y) for i, x in enumerate(points) for y in points[:i]]
-        sums = [f"|{x}{y}|" for x, y in pairs if (x, y) != ("B", "A")]
-        sums += [f"median({points[:3]}, {x})" for x in points[:3]]
-        for r in range(2, min(len(sums), 5 if d == 4 else 5) + 1):
-            text = f"given points {', '.join(points)}\nclaim {' + '.join(sums[:r])} = |AB|\n"
-            (sheet,) = read(text)
-            t = thesis(sheet.claims[0].body, list(points), False)  # type: ignore[arg-type]
-            start = time.perf_counter()
-            f = formulate(t, Form.SIGN_PRODUCT)
-            s = time.perf_counter() - start
-            rows.append(f"| {r} | {d} | {f.terms} | {s:.4f} | {s / max(f.terms, 1) * 1e6:.1f} us |")
-    return [*rows, ""]
+def growth(options: argparse.Namespace) -> str:
+    """(c): r roots in d parameters."""
+    import growth as g
+
+    rows = []
+    for d in range(1, 5):
+        for r in range(2, 8):
+            c = g.case(r, d, options.cap)
+            if c is None:
+                rows.append([str(d), str(r), "", "", "", f"over {options.cap:.0f} s", "", ""])
+                break
+            rows.append(
+                [
+                    str(d),
+                    str(r),
+                    str(c.degree),
+                    str(c.terms),
+                    str(c.bits),
+                    show(c.seconds),
+                    f"{show(c.multiplication)} ({c.product_terms} terms)",
+                    f"{c.seconds / c.multiplication:.1f}",
+                ]
+            )
+    head = ["d", "r", "degree", "terms", "bits", "sign product", "one multiplication", "ratio"]
+    return (
+        "## Growth\n\nSign product of a sum of r independent roots in d parameters, next to one FLINT "
+        "multiplication of two dense polynomials of half its degree and half its coefficients' length. "
+        f"A column stops at its first case over {options.cap:.0f} s.\n\n" + table(head, rows)
+    )
 
 
-def examples() -> list[str]:
-    """Seconds of every example."""
-    rows = ["## The examples", "", "| sheet | claims | verdicts | seconds |", "| --- | --- | --- | --- |"]
+def sheets(options: argparse.Namespace) -> str:
+    """(d): every example."""
+    import surdwise
+
+    rows = []
+    total = 0.0
     for path in sorted((ROOT / "examples").glob("*.claim")):
         start = time.perf_counter()
-        found = [d for sheet in read(path) for d in decide(sheet)]
-        s = time.perf_counter() - start
-        rows.append(f"| {path.stem} | {len(found)} | {', '.join(d.verdict.value for d in found)} | {s:.3f} |")
-    return [*rows, ""]
+        decisions = [d for s in surdwise.read(path) for d in surdwise.decide(s, time_limit=options.cap)]
+        seconds = time.perf_counter() - start
+        total += seconds
+        rows.append([path.name, ", ".join(d.verdict.value for d in decisions), show(seconds)])
+    rows.append(["all", "", show(total)])
+    return (
+        "## Sheets\n\n`decide` over the examples, one after another in one process (without its start).\n\n"
+        + table(["sheet", "verdicts", "time"], rows)
+    )
+
+
+PARTS: dict[str, Callable[[argparse.Namespace], str]] = {
+    "startup": startup,
+    "norms": norms,
+    "growth": growth,
+    "sheets": sheets,
+}
 
 
 def main() -> None:
-    """Measure and write."""
-    options = argparse.ArgumentParser(description=__doc__)
-    options.add_argument("--runs", type=int, default=15, help="alternating process runs")
-    options.add_argument("--peers", type=float, default=60.0, help="seconds for each solver, 0 for none")
-    chosen = options.parse_args()
-    lines = [
-        "# Measured in one run",
-        "",
-        f"{datetime.date.today()}, Python {platform.python_version()}, {os.cpu_count()} cores, "
-        f"{platform.machine()}.",
-        "",
-    ]
-    lines += process_ratio(chosen.runs)
-    lines += medians_norm()
-    lines += inequality_table(chosen.peers)
-    lines += growth()
-    lines += examples()
-    text = "\n".join(lines)
-    print(text)
-    (Path(__file__).parent / "results.md").write_text(text, encoding="utf-8")
+    """Run, print, write."""
+    parser = argparse.ArgumentParser(
+        description=__doc__, formatter_class=argparse.RawDescriptionHelpFormatter
+    )
+    parser.add_argument("--runs", type=int, default=15, help="runs of whole processes (15)")
+    parser.add_argument(
+        "--cap", type=float, default=30.0, help="seconds after which one case is given up (30)"
+    )
+    parser.add_argument("--only", choices=PARTS, action="append", help="one table; may be repeated")
+    options = parser.parse_args()
+    head = (
+        f"# Measurements\n\n{datetime.date.today().isoformat()}, {os.cpu_count()} processors "
+        f"({platform.machine()}), Python {platform.python_version()}, "
+        f"python-flint {version('python-flint')}. Written by `python bench/run.py`; every ratio is between figures of the same run."
+    )
+    text = [head]
+    print(head, flush=True)
+    for name in options.only or PARTS:
+        text.append(PARTS[name](options))
+        print("\n" + text[-1], flush=True)
+    if not options.only:
+        (Path(__file__).parent / "results.md").write_text("\n\n".join(text) + "\n", encoding="utf-8")
 
 
 if __name__ == "__main__":

@@ -10,12 +10,13 @@ Nothing here is a proof; all of it is written from the meaning of the forms alon
 
 from __future__ import annotations
 
+import itertools
 import math
 from collections.abc import Callable, Sequence
 from fractions import Fraction
 from typing import Any
 
-import mpmath
+import mpmath  # type: ignore[import-untyped]
 import numpy as np
 
 from surdwise.sheet import Sheet
@@ -277,6 +278,7 @@ def circumcentre(a: Num, b: Num, c: Num) -> Num:
     return a + x + 1j * y
 
 
+EQUATIONS = ("collinear", "concyclic", "parallel_lines", "perpendicular_lines")
 FORMS: dict[str, Callable[..., None]] = {}
 
 
@@ -628,7 +630,7 @@ def _on_circle(g: Drawing, p: Pt, k: Any) -> None:
     if g.new(p):
         t = g.number(lambda r, n: r.uniform(0, 2 * math.pi, n))
         at = o + np.sqrt(r2) * np.exp(1j * t)
-        known = [q for q in g.points.values()]
+        known = list(g.points.values())
         if g.theta_is_new() and known:
             # now and then at a point of the circle, or opposite or halfway to one
             i = g.rng.integers(0, len(known), g.n)
@@ -930,7 +932,7 @@ def constrain(g: Drawing, body: Comparison | Relation) -> None:
     """An equation or a relation under `given`."""
     if isinstance(body, Comparison):
         values = [measure.value(q, g) for q in body.items]
-        for (x, sx), (y, sy) in zip(values, values[1:], strict=False):
+        for (x, sx), (y, sy) in itertools.pairwise(values):
             g.zero(x - y, sx + sy + TINY, "equation")
         return
     if body.form == "collinear":
@@ -945,7 +947,7 @@ def constrain(g: Drawing, body: Comparison | Relation) -> None:
     if body.form == "concyclic":
         _concyclic_zero(g, [g.at(p) for p in body.args[0]])  # type: ignore[union-attr]
         return
-    (p, d), (q, e) = (g.line(x) for x in body.args)
+    (p, d), (_q, e) = (g.line(x) for x in body.args)
     w = cross(d, e) if body.form == "parallel_lines" else dot(d, e)
     assert body.form in ("parallel_lines", "perpendicular_lines")
     g.zero(w, abs(d) * abs(e) + TINY, body.form)
@@ -959,6 +961,12 @@ def walk(g: Drawing, sheet: Sheet) -> None:
             FORMS[body.form](g, *body.args)
         else:
             assert isinstance(body, Comparison | Relation)
+            constrain(g, body)
+    for line in sheet.provided:  # a thin condition is met by solving for it, not by luck
+        body = line.body
+        if (isinstance(body, Comparison) and set(body.ops) == {"="}) or (
+            isinstance(body, Relation) and body.form in EQUATIONS
+        ):
             constrain(g, body)
 
 
@@ -1000,7 +1008,11 @@ def _solve(g: Drawing, sheet: Sheet, steps: int = 40) -> None:
         jac = _jacobian(g, sheet, theta)
         jt = np.transpose(jac, (0, 2, 1))
         a = jt @ jac
-        a += (damp[:, None, None] + 1e-13) * (1 + np.trace(a, axis1=1, axis2=2))[:, None, None] * np.eye(a.shape[1])
+        a += (
+            (damp[:, None, None] + 1e-13)
+            * (1 + np.trace(a, axis1=1, axis2=2))[:, None, None]
+            * np.eye(a.shape[1])
+        )
         step = np.linalg.solve(a, jt @ f[:, :, None])[:, :, 0]
         new = theta - np.clip(step, -1.0, 1.0)
         fn = np.nan_to_num(_residuals(g, sheet, new), nan=1e6, posinf=1e6, neginf=-1e6)
@@ -1038,5 +1050,3 @@ def given_figure(points: dict[str, Any]) -> Drawing:
     g = Drawing(Digits())
     g.restart(points)
     return g
-
-

@@ -5,9 +5,9 @@ from __future__ import annotations
 from collections.abc import Iterator
 from typing import Any
 
-import mpmath
+import mpmath  # type: ignore[import-untyped]
 import numpy as np
-import sympy
+import sympy  # type: ignore[import-untyped]
 
 from surdwise import Decision, Sheet, Verdict
 from surdwise.sheet import SurdwiseError, read_text
@@ -91,7 +91,14 @@ def in_frame(condition: str) -> bool:
 
 
 def _agrees(
-    sheet: Sheet, g: Drawing, known: Any, t: Any, condition: str | None, frame: bool, what: str, full: bool = True
+    sheet: Sheet,
+    g: Drawing,
+    known: Any,
+    t: Any,
+    condition: str | None,
+    frame: bool,
+    what: str,
+    full: bool = True,
 ) -> Iterator[str]:
     """Whether a condition is true exactly where the truths t are 1."""
     if condition is None or frame or in_frame(condition):

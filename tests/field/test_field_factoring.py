@@ -212,7 +212,8 @@ def _tower(squares: list[str]) -> Tower:
 def _poly(text: str) -> Poly:
     """A polynomial in the parameters from its text."""
     names = {f"u{k}": ring.param(k) for k in range(2)}
-    return eval(text.replace("^", "**"), {}, names) * ring.ONE
+    out: Poly = eval(text.replace("^", "**"), {}, names) * ring.ONE
+    return out
 
 
 @needs_singular

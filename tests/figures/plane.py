@@ -269,6 +269,7 @@ def _regular(n: int) -> Callable[[Canvas, complex, complex], list[complex]]:
 
 def _rectangle(c: Canvas, u: complex, v: complex) -> list[complex]:
     d = 1j * (v - u) * c.number()
+    need(abs(d) > 1e-3)
     return [v + d, u + d]
 
 
@@ -590,7 +591,7 @@ def truth(c: Any, v: Canvas) -> bool | None:
         xs = [quantity(q, v) for q in c.items]
         out: bool | None = True
         for x, op, y in zip(xs, c.ops, xs[1:], strict=False):
-            gap = (x - y) / (1 + abs(x) + abs(y))
+            gap = (x - y) / (abs(x) + abs(y) + 1e-9)
             close = abs(gap) < (1e-8 if op == "=" else NEAR)
             if op == "=":
                 link: bool | None = close if close or abs(gap) > 1e-6 else None

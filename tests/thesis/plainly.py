@@ -7,6 +7,7 @@ two sides come out, as mpmath numbers.
 from __future__ import annotations
 
 from collections.abc import Mapping
+from itertools import pairwise
 from typing import Any
 
 import mpmath  # type: ignore[import-untyped]
@@ -47,7 +48,7 @@ def measure(q: Measure, at: Places) -> Any:
     if q.kind == "area":
         # cut along the diagonals from the first vertex, with signs from the winding
         total = mpmath.mpf(0)
-        for b, c in zip(ps[1:], ps[2:], strict=False):
+        for b, c in pairwise(ps[1:]):
             total += (b[0] - ps[0][0]) * (c[1] - ps[0][1]) - (b[1] - ps[0][1]) * (c[0] - ps[0][0])
         return abs(total) / 2
     if q.kind == "perimeter":

@@ -55,7 +55,7 @@ def named(t: Thesis, p: Poly) -> Any:
 
 def run_sympy(script: str) -> list[Any]:
     scope: dict[str, Any] = {}
-    exec(script, scope)  # noqa: S102
+    exec(script, scope)
     return [sp.sympify(p) for p in scope["polynomials"]]
 
 
@@ -140,7 +140,7 @@ def test_the_legend_defines_every_name(claim: str) -> None:
 
 
 def test_primed_and_numbered_points_get_names_of_their_own() -> None:
-    (sheet,) = surdwise.read("given points A, B, C', C2, C\nclaim |AC'| + |BC2| = |AC| + |BC'|\n")
+    (sheet,) = surdwise.read("given points A, B, C', C2, C\nclaim |AB| + |AC'| = |BC2| + |AC|\n")
     (r,) = surdwise.rewrite(sheet)
     (p,) = run_sympy(r.export(Form.SIGN_PRODUCT, "sympy"))
     assert len(p.free_symbols) == 2 * 5 - 4

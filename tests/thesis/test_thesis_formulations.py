@@ -52,7 +52,7 @@ def places(t: Thesis, point: Point) -> Places:
     """The points of a thesis at numeric parameters."""
     names = {n: point.get(ring.param_slot(k), mpmath.mpf(0)) for k, n in enumerate(ring.PARAM_NAMES)}
     return {
-        n: (mpmath.mpf(1) * eval(x, {}, names), mpmath.mpf(1) * eval(y, {}, names))  # noqa: S307
+        n: (mpmath.mpf(1) * eval(x, {}, names), mpmath.mpf(1) * eval(y, {}, names))
         for n, (x, y) in t.placed.items()
     }
 

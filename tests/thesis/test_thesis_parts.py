@@ -55,7 +55,7 @@ CASES = {
     "apexes on two sides": (
         "triangle ABC\nD = apex of equilateral triangle on BC\nE = apex of equilateral triangle on CA",
         "|AD| = |BE|",
-        2,
+        3,
         1,
         (P, P, P),
     ),
@@ -63,7 +63,7 @@ CASES = {
         "triangle ABC\nD = apex of equilateral triangle on BC\nE = apex of equilateral triangle on CA"
         "\nF = apex of equilateral triangle on AB",
         "|AD| = |BE|",
-        4,
+        6,
         2,
         (P, P, P),
     ),
@@ -132,13 +132,13 @@ IDEALS = {
         "4*h^2-3, y-u*x, 3*x+3*u^2*x-3-2*h*u, a^2-x^2-y^2, b^2-(x-1)^2-y^2, c^2-(x-1/2)^2-(y-h)^2",
         "a-b-c",
     ),
-    "Ptolemy, any order": (
-        # A = (0,0), B = (1,0), C = (u,v), D by its slope w on the circle x^2 + y^2 = x + e y
-        "u,v,w",
-        "x,y,a,b,c,d,e,f",
-        "v*(1+w^2)*x-v-w*(u^2+v^2-u), y-w*x, a^2-1, b^2-(u-1)^2-v^2, c^2-(x-u)^2-(y-v)^2, d^2-x^2-y^2,"
-        "e^2-u^2-v^2, f^2-(x-1)^2-y^2",
-        "a*c+b*d-e*f",
+    "apexes on two sides": (
+        # C = (0,0), B = (1,0), A = (u,v); D = (x,y) over BC, E = (z,w) over CA
+        "u,v",
+        "x,y,z,w,a,b",
+        "x^2+y^2-(x-1)^2-y^2, x^2+y^2-1, z^2+w^2-(z-u)^2-(w-v)^2, z^2+w^2-u^2-v^2,"
+        "a^2-(x-u)^2-(y-v)^2, b^2-(z-1)^2-w^2",
+        "a-b",
     ),
     "equal sides": ("v", "a,b", "a^2-1/4-v^2, b^2-1/4-v^2", "a-b"),
 }

@@ -4,200 +4,28 @@ from __future__ import annotations
 
 import time
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
 
-from ..field import exact, ring, roots
-from ..field.ball import between, branch_parameters
+from ..field import roots
 from ..field.cells import TooManyCells, never_zero
-from ..field.near import NearBranch
-from ..field.real import Branch, Unsettled, branches
+from ..field.real import Unsettled
 from ..field.ring import PARAM_NAMES, TooLarge, is_constant
 from ..field.tower import Element
-from ..figure.component import Component
-from ..figure.conditions import EQUATIONS, Judge, is_closed, is_open, truth
+from ..figure.conditions import EQUATIONS, is_closed
 from ..figure.program import Program, program
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
 from .algebraic import AlgebraicSide, algebraic_side, dominant
-from .candidates import Candidate, candidates
 from .explain import explain
 from .frames import cheapest_frame
-from .outcome import Decision, Figure, Link, PlacedPoint, Variant, Verdict
-from .spot import Undefined
-from .survey import OutOfTime, Place, Statement, Survey, Surveyor
+from .naming import Case, statement
+from .outcome import Decision, Link, Variant, Verdict
+from .survey import OutOfTime, Place, Survey
 from .variants import patterns, signed, terms
-from .words import Lexicon, in_frame, name, said
+from .witness import witness
+from .words import in_frame, said
 
-PROOF_ROUNDS = 6
-NAMING_PLACES = 120
 NAMING_SECONDS = 20.0
-
-
-def statement(c: Condition) -> Statement:
-    """A condition as something to be judged."""
-    return lambda j: truth(c, j)
-
-
-def agrees(claim: Condition, guess: Condition) -> Statement:
-    """Whether claim and guess are true or false together (an undefined guess disagrees)."""
-
-    def judge(j: Judge) -> bool:
-        t = truth(claim, j)
-        try:
-            return truth(guess, j) == t
-        except Undefined:
-            return False
-
-    return judge
-
-
-@dataclass
-class Case:
-    """The sheet's figure under examination for one claim."""
-
-    sheet: Sheet
-    program: Program
-    deadline: float
-    progress: Callable[[str], None]
-    lexicon: Lexicon | None = None
-
-    def tick(self) -> None:
-        """Stop when time is out."""
-        if time.monotonic() > self.deadline:
-            raise OutOfTime
-
-    def survey(self, statements: Sequence[Statement], closed: bool, shallow: bool = False) -> Survey:
-        """Survey all admitted figures (or open cells only) for some statements."""
-        conditions: list[Condition] = [line.body for line in self.sheet.provided]  # type: ignore[misc]
-        return Surveyor(
-            self.program,
-            [statement(c) for c in conditions],
-            statements,
-            self.deadline,
-            closed=closed,
-            open_conditions=all(is_open(c) for c in conditions),
-            progress=self.progress,
-            shallow=shallow,
-        ).run()
-
-    def words(self, found: Survey, claim: Condition) -> Lexicon:
-        """The figure's vocabulary, and the borders of the survey as a last resort."""
-        if self.lexicon is None:
-            comps = _distinct([p.comp for p in found.places])
-            last = [
-                Candidate(Relation("frame_sign", (p, op)), 4.0 + 0.2 * len(p))  # type: ignore[arg-type]
-                for p in found.borders.values()
-                if len(p) <= 60
-                for op in (">", "<", "=")
-            ]
-            self.lexicon = Lexicon([*candidates(self.sheet, comps, claim), *last])
-        return self.lexicon
-
-    def named(
-        self, whats: Sequence[Condition], found: Survey, loose: frozenset[int] = frozenset()
-    ) -> list[Name]:
-        """For each statement (the i-th judged by the survey's i-th truth) a condition proved
-        equivalent to it on every admitted figure, or none.
-
-        Guess from the places, prove by a survey of the agreement, learn from the places where
-        they differ.  For the `loose` statements a name that is right up to a thin set will do
-        where no exact one is short.
-        """
-        lexicon = self.words(found, whats[0])
-        full = max(p.dimension for p in found.places)
-        pools = [_varied([(p, bool(p.truths[i])) for p in found.places]) for i in range(len(whats))]
-        answers = [Name(None, True)] * len(whats)
-        rough: set[int] = set()
-        open_ = set(range(len(whats)))
-        for _ in range(PROOF_ROUNDS):
-            guesses: dict[int, Condition] = {}
-            for i in sorted(open_):
-                guess = None if i in rough else _guessed(lexicon, pools[i], whats[i], i not in loose)
-                if guess is None and i in loose:
-                    rough.add(i)
-                    pools[i] = [(p, t) for p, t in pools[i] if p.dimension == full]
-                    guess = _guessed(lexicon, pools[i], whats[i], True)
-                if guess is not None:
-                    guesses[i] = guess
-            open_ = set(guesses)
-            if not guesses:
-                break
-            keys = list(guesses)
-            pairs: list[Statement] = [agrees(whats[i], guesses[i]) for i in keys]
-            proof = self.survey([*pairs, *(statement(whats[i]) for i in keys)], closed=False)
-            for k, i in enumerate(keys):
-                wrong = [p for p in proof.places if not p.truths[k]]
-                bad = [p for p in wrong if p.dimension == full] if i in rough else wrong
-                if bad:
-                    news = [(p, bool(p.truths[len(keys) + k])) for p in bad[:30]]
-                    if full <= 2:
-                        lexicon.extend(separators(news, pools[i]))
-                    pools[i] = [*pools[i], *news]
-                else:
-                    answers[i] = Name(guesses[i], not wrong)
-                    open_.discard(i)
-        return answers
-
-
-def separators(bad: Sequence[tuple[Place, bool]], pool: Sequence[tuple[Place, bool]]) -> list[Candidate]:
-    """Comparisons of one parameter with a rational that tell places apart which the figure's
-    words and the borders' signs do not."""
-    out: dict[str, Candidate] = {}
-    for p, t in bad[:6]:
-        here = branch_parameters(p.branch)
-        for q, s in pool:
-            there = branch_parameters(q.branch) if s != t else {}
-            for k in here.keys() & there.keys():
-                value = between(here[k], there[k])
-                if value is not None and len(out) < 40:
-                    f = ring.primitive(ring.param(k) - value)
-                    for op in (">", "<"):
-                        relation = Relation("frame_sign", (f, op))  # type: ignore[arg-type]
-                        out[f"{ring.key(f)} {op}"] = Candidate(relation, 5.0)
-    return list(out.values())
-
-
-@dataclass(frozen=True)
-class Name:
-    """A proved condition (None: not found), and whether it is right on thin sets too."""
-
-    condition: Condition | None
-    exact: bool
-
-
-def _guessed(
-    lexicon: Lexicon, pool: Sequence[tuple[Place, bool]], what: Condition, with_frame: bool
-) -> Condition | None:
-    pts = [p for p, _ in pool]
-    target = sum(1 << k for k, (_, t) in enumerate(pool) if t)
-    whole = (1 << len(pts)) - 1
-    lits = lexicon.literals(pts, what)
-    plain = [x for x in lits if not in_frame(x.condition)]
-    full = max(p.dimension for p, _ in pool)
-    short = full - max((p.dimension for p, t in pool if t), default=full)
-    guess = name(target, whole, plain, short)
-    if guess is None and with_frame:
-        guess = name(target, whole, lits, short)
-    return guess
-
-
-def _distinct(comps: Sequence[Component]) -> list[Component]:
-    return list({id(c): c for c in comps}.values())
-
-
-def _varied(places: Sequence[tuple[Place, bool]]) -> Sequence[tuple[Place, bool]]:
-    """At most NAMING_PLACES places, both truths and all dimensions among them."""
-    if len(places) <= NAMING_PLACES:
-        return places
-    groups: dict[tuple[int, bool], list[tuple[Place, bool]]] = {}
-    for p, t in places:
-        groups.setdefault((p.dimension, t), []).append((p, t))
-    share = NAMING_PLACES // len(groups)
-    out: list[tuple[Place, bool]] = []
-    for g in groups.values():
-        step = max(len(g) // share, 1)
-        out += g[::step][:share]
-    return out
 
 
 def verdict_of(places: Sequence[Place], i: int) -> Verdict:
@@ -210,64 +38,6 @@ def verdict_of(places: Sequence[Place], i: int) -> Verdict:
     if any(p.truths[i] for p in places if p.dimension == full):
         return Verdict.CONDITIONAL
     return Verdict.FAILS
-
-
-def figure(prog: Program, p: Place) -> Figure | None:
-    """The witness figure of a place; None if its exact coordinates are out of reach."""
-    comp, branch = p.comp, p.branch
-    if isinstance(branch, NearBranch):
-        same = exactly_there(prog, comp, branch)
-        if same is None:
-            return None
-        comp, branch = same
-    return {
-        n: PlacedPoint(
-            (exact.text(v.x, branch), exact.text(v.y, branch)), (branch.approx(v.x), branch.approx(v.y))
-        )
-        for n, v in comp.points.items()
-    }
-
-
-WITNESS_DEGREE = 24
-
-
-def exactly_there(prog: Program, comp: Component, near: NearBranch) -> tuple[Component, Branch] | None:
-    """The figure of an enclosed point over the number field of its coordinates: the equations
-    of the point are solved exactly and the one figure within the enclosure is taken."""
-    if max(p.total_degree() for p in near.system) > WITNESS_DEGREE:
-        return None
-    wanted = {n: (near.ball(v.x, 128), near.ball(v.y, 128)) for n, v in comp.points.items()}
-    fit = []
-    equations = [ring.primitive(p) for p in near.system]
-    for c in prog.run(equations).components:
-        if c.free:
-            continue
-        for b in branches(c.ground(), {}):
-            here = {n: (b.ball(v.x, 128), b.ball(v.y, 128)) for n, v in c.points.items()}
-            if all(here[n][i].overlaps(wanted[n][i]) for n in wanted for i in (0, 1)):
-                fit.append((c, b))
-    return fit[0] if len(fit) == 1 else None
-
-
-def witness(prog: Program, places: Sequence[Place], i: int, value: bool) -> Figure | None:
-    """A figure with the given truth: of full dimension if possible, then the plainest."""
-    fit = [p for p in places if p.truths[i] == value]
-    if not fit:
-        return None
-    top = max(p.dimension for p in fit)
-    best = sorted((p for p in fit if p.dimension == top), key=lambda p: _plainness(p.branch))[:6]
-    if isinstance(best[0].branch, NearBranch):
-        best = best[:1]
-    figures = [f for f in (figure(prog, p) for p in best) if f is not None]
-    if not figures:
-        return None
-    return min(figures, key=lambda f: sum(len(q.exact[0]) + len(q.exact[1]) for q in f.values()))
-
-
-def _plainness(b: Branch | NearBranch) -> int:
-    if isinstance(b, NearBranch):
-        return 1000 + sum(p.total_degree() for p in b.system)
-    return 40 * len(b.path) + sum(len(str(v)) for v in b.values.values())
 
 
 def decide_claim(
