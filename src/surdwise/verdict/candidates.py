@@ -53,7 +53,7 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     names = sorted({n for c in comps for n in c.points}, key=lambda n: (n not in _mentioned(sheet), n))
     pts = [Pt(n) for n in names[:MAX_POINTS]]
     straight: set[tuple[str, ...]] = {
-        tri for tri in combinations([p.name for p in pts], 3) if all(_collinear(c, tri) for c in comps)
+        tri for tri in combinations(sorted(p.name for p in pts), 3) if all(_collinear(c, tri) for c in comps)
     }
     shapes = _triangles(sheet)
     used = _lengths(claim)
