@@ -56,12 +56,13 @@ def measured(roots: int, params: int) -> Case:
     (p,) = sign_product(thesis)
     seconds = time.perf_counter() - start
     bits = max(abs(int(c.p)).bit_length() for c in p.coeffs())
-    half = p.total_degree() // 2
+    degree = int(p.total_degree())
+    half = degree // 2
     f, g = (_dense(half, params, bits // 2, rng) for _ in range(2))
     start = time.perf_counter()
     fg = f * g
     multiplication = time.perf_counter() - start
-    return Case(roots, params, len(p), p.total_degree(), bits, seconds, multiplication, len(fg))
+    return Case(roots, params, len(p), degree, bits, seconds, multiplication, len(fg))
 
 
 def _dense(degree: int, params: int, bits: int, rng: random.Random):  # type: ignore[no-untyped-def]

@@ -1,7 +1,7 @@
 """Measure everything in one run, print tables of ratios, and write results.md next to this file.
 
 python bench/run.py                 everything (some minutes)
-python bench/run.py --only startup  one table: startup, norms, growth, sheets
+python bench/run.py --only startup  one table: startup, norms, peers, growth, sheets
 """
 
 from __future__ import annotations
@@ -71,10 +71,10 @@ def norms(options: argparse.Namespace) -> str:
     claims = "\n".join(f"- {name}: `{claim}`" for name, claim in n.CLAIMS.items())
     return (
         "## Sign products and eliminations\n\nThe sign product here, and Singular's `eliminate` of the "
-        "lengths from the auxiliary ideal of the same claim (degree reverse lexicographic order). Times inside "
-        "each system, Singular's by its own clock `rtimer` (wall time, in milliseconds), short ones over 50 "
-        f"repetitions; then whole processes. Target for the medians, inside: {n.TARGET:.0f}.\n\n{claims}\n\n"
-        + table(head, rows)
+        "lengths from the auxiliary ideal of the same claim (degree reverse lexicographic order). Times "
+        "inside each system, Singular's by its own clock `rtimer` (wall time, in milliseconds), short ones "
+        "over 50 repetitions; then whole processes. Target for the medians, inside: "
+        f"{n.TARGET:.0f}.\n\n{claims}\n\n" + table(head, rows)
     )
 
 
@@ -128,9 +128,17 @@ def sheets(options: argparse.Namespace) -> str:
     )
 
 
+def peers(options: argparse.Namespace) -> str:
+    """Inequalities, next to two general solvers."""
+    import peers as p
+
+    return "\n".join(p.inequality_table(options.peers)).strip()
+
+
 PARTS: dict[str, Callable[[argparse.Namespace], str]] = {
     "startup": startup,
     "norms": norms,
+    "peers": peers,
     "growth": growth,
     "sheets": sheets,
 }
@@ -145,12 +153,14 @@ def main() -> None:
     parser.add_argument(
         "--cap", type=float, default=30.0, help="seconds after which one case is given up (30)"
     )
+    parser.add_argument("--peers", type=float, default=60.0, help="seconds for each solver (60; 0: none)")
     parser.add_argument("--only", choices=PARTS, action="append", help="one table; may be repeated")
     options = parser.parse_args()
     head = (
         f"# Measurements\n\n{datetime.date.today().isoformat()}, {os.cpu_count()} processors "
         f"({platform.machine()}), Python {platform.python_version()}, "
-        f"python-flint {version('python-flint')}. Written by `python bench/run.py`; every ratio is between figures of the same run."
+        f"python-flint {version('python-flint')}. Written by `python bench/run.py`; every ratio is between "
+        "figures of the same run."
     )
     text = [head]
     print(head, flush=True)

@@ -186,7 +186,7 @@ def rewrite(
                     if script or to == "latex"
                     else f"\n{f.form.value}:"
                 )
-                print(r.export(f.form, to))
+                print(r.export(f.form, to) if f.polynomials else f"{mark}not written down: {f.why_not}")
             if form is None and to == "text":
                 head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds", "status"]
                 rows = [

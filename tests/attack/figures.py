@@ -1024,14 +1024,17 @@ def _solve(g: Drawing, sheet: Sheet, steps: int = 40) -> None:
         if np.quantile(np.abs(f).max(1), 0.7) < 1e-15:
             break
     jac = _jacobian(g, sheet, theta)
-    least = np.linalg.svd(jac, compute_uv=False)[:, -1]
+    rows = np.median(np.linalg.norm(jac, axis=2), axis=0) > 1e-7  # the others hold by construction
+    least = np.full(g.n, 1.0)
+    if rows.any():
+        least = np.linalg.svd(jac[:, rows], compute_uv=False)[:, -1]
     _residuals(g, sheet, theta)
     worst = np.zeros(g.n)
     for v, s in g.residuals:
         worst = np.fmax(worst, np.where(np.isfinite(v), np.abs(v) / s, 1.0))
     g.ok = g.ok & (worst < 1e-12)
     loose = least < 1e-3
-    g.ops = Floats(np.where(loose, 1e-4, 1e-9), np.where(loose, 3e-2, 1e-6))
+    g.ops = Floats(np.where(loose, 1e-4, 1e-10), np.where(loose, 3e-2, 1e-7))
 
 
 def _jacobian(g: Drawing, sheet: Sheet, theta: Any) -> Any:

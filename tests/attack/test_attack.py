@@ -27,7 +27,7 @@ def all_sheets() -> list[tuple[str, Sheet]]:
 @pytest.mark.parametrize("sheet", [pytest.param(s, id=name) for name, s in all_sheets()])
 def test_decisions(sheet: Sheet) -> None:
     constrained = any(not isinstance(line.body, Fact) for line in sheet.given)
-    n = 600 if constrained else 10_000
+    n = 300 if constrained else 10_000
     for i, d in enumerate(decide(sheet, time_limit=30)):
         found = complaints(sheet, i, d, n)
         assert not found, (d.claim, d.verdict.value, d.condition, found[:4])

@@ -94,7 +94,8 @@ SHEETS = [
     "given equilateral triangle ABC\ngiven P inside ABC\nclaim |PA| + |PB| > |PC|",
     # an excentre is never the incentre
     "given triangle ABC\ngiven J = excentre of ABC opposite A\nclaim dist(J, AB) = inradius(ABC)",
-    "given triangle ABC\ngiven T = touch point of incircle of ABC on BC\nclaim |BT| + |AC| = perimeter(ABC)/2",
+    "given triangle ABC\ngiven T = touch point of incircle of ABC on BC\n"
+    "claim |BT| + |AC| = perimeter(ABC)/2",
     "given points A, B, C\ngiven k = circle with diameter AB\ngiven m = circle with diameter AC\n"
     "given X = meet of k and m other than A\nclaim B, C, X collinear",
 ]

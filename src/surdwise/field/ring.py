@@ -220,6 +220,13 @@ def substitute(p: Poly, values: dict[int, Rational]) -> Poly:
     return p.subs({PARAM_NAMES[k]: v for k, v in values.items()})
 
 
+def replaced(p: Poly, values: dict[int, Poly]) -> Poly:
+    """p with some variables, by position, replaced by polynomials."""
+    if not values:
+        return p
+    return p.compose(*(values.get(k, v) for k, v in enumerate(_VARS)))
+
+
 def univariate(p: Poly, slot: int) -> fmpz_poly:
     """p, which involves at most one variable, as an integer polynomial up to a constant."""
     p = primitive(p)

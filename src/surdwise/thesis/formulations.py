@@ -14,7 +14,7 @@ from dataclasses import dataclass
 
 from ..field import ring, roots
 from ..field.ring import Poly
-from ..field.tower import Gen, Tower
+from ..field.tower import Element, Gen, Tower
 from .formal import Thesis
 from .parts import Form
 
@@ -22,7 +22,7 @@ from .parts import Form
 @dataclass(frozen=True)
 class Formulation:
     """One formulation: its polynomials (the first is the thesis, the others define lengths),
-    and what they cost."""
+    and what they cost; without polynomials `why_not` says what was too large."""
 
     form: Form
     polynomials: tuple[Poly, ...]
@@ -31,12 +31,16 @@ class Formulation:
     terms: int
     largest: int
     seconds: float
+    why_not: str = ""
 
 
 def formulate(t: Thesis, form: Form, tick: Callable[[], None] = lambda: None) -> Formulation:
-    """One formulation of a thesis."""
+    """One formulation of a thesis, with the seconds it took."""
     start = time.perf_counter()
-    polys = MAKERS[form](t, tick)
+    try:
+        polys = MAKERS[form](t, tick)
+    except ring.TooLarge as e:
+        return Formulation(form, (), 0, 0, 0, 0, time.perf_counter() - start, str(e))
     seconds = time.perf_counter() - start
     used = {k for p in polys for k, d in enumerate(p.degrees()) if d > 0}
     largest = max((abs(int(c.p)) for p in polys for c in p.coeffs()), default=0)
@@ -52,7 +56,7 @@ def formulate(t: Thesis, form: Form, tick: Callable[[], None] = lambda: None) ->
 
 
 def _definitions(t: Thesis) -> tuple[Poly, ...]:
-    return tuple(x.gen.modulus for x in t.lengths)
+    return tuple(ring.primitive(x.gen.modulus) for x in t.lengths)
 
 
 def auxiliary(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
@@ -63,8 +67,13 @@ def auxiliary(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
 def squared(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
     """left^2 - right^2 with squares of lengths replaced; lengths that remain are unknowns."""
     p = ring.primitive(t.tower.reduce(t.left * t.left - t.right * t.right))
-    left = tuple(d for x, d in zip(t.lengths, _definitions(t), strict=True) if p.degrees()[x.gen.slot] > 0)
-    return (p, *left, *_numbers(t))
+    needed: list[Poly] = []
+    used = p
+    for x, d in reversed(list(zip(t.lengths, _definitions(t), strict=True))):
+        # a nested length is defined by others, which are needed then
+        if any(q.degrees()[x.gen.slot] > 0 for q in (used, *needed)):
+            needed.insert(0, d)
+    return (p, *needed, *_numbers(t))
 
 
 def _numbers(t: Thesis) -> tuple[Poly, ...]:
@@ -76,8 +85,9 @@ def sign_product(t: Thesis, tick: Callable[[], None] = lambda: None) -> tuple[Po
     """Product of E over all signs of the lengths, up to a common sign.
 
     Lemma: if E(-l) = +-E(l), the product over all but one length's sign is, as a polynomial in
-    that length r, even or odd: X or Y r.  Then X (or Y) is the product over the patterns up to
-    a common sign, for X^2 - q Y^2 is its square (up to q) and counts every pattern twice.
+    that length r, even or odd: X or Y r.  Then X, or q Y (to keep the zeros of r), vanishes just
+    where the product over the patterns up to a common sign does, for X^2 - q Y^2 counts every
+    pattern twice.
     """
     gens = [x.gen for x in t.lengths]
     p = t.equation
@@ -87,7 +97,10 @@ def sign_product(t: Thesis, tick: Callable[[], None] = lambda: None) -> tuple[Po
             continue
         a, b = ring.linear_parts(p, g.slot)
         last = i == len(gens) - 1
-        p = b if last and a.is_zero() else t.tower.reduce(a * a - b * b * square_of(g))
+        if last and a.is_zero():
+            p = b * square_of(g)
+        elif not (last and b.is_zero()):
+            p = t.tower.reduce(a * a - b * b * square_of(g))
         p = ring.primitive(p)
     return (p, *_numbers(t))
 
@@ -112,29 +125,40 @@ def minimal(t: Thesis, tick: Callable[[], None]) -> tuple[Poly, ...]:
     """Product over the distinct conjugates of E: lengths are adjoined as a field, so that a
     product of earlier roots is recognised and its sign follows theirs."""
     field = Tower(())
-    image: list[Poly] = [ring.ZERO] * ring.NVARS
-    for k in range(ring.MAX_PARAMS):
-        image[ring.param_slot(k)] = ring.param(k)
+    images: dict[int, Element] = {}
+    names: dict[int, Gen] = {}
     for g in t.tower.gens:
+        tick()
         assert g.radicand is not None
-        q = field.element(g.radicand.compose(*image))
+        q = _at(g.radicand, t, images, field)
         s = roots.sqrt(q, field)
         if s is None:
-            field, s = field.adjoin_sqrt(q, "positive" if g.label == "number" else "either", g.label)
-        den = s.den
-        if not ring.is_constant(den):
-            raise ring.TooLarge("a length with a denominator in the minimal form")
-        image[g.slot] = s.num
-    e = field.reduce(t.equation.compose(*image))
-    lengths = [g for g in field.gens if g.label != "number"]
-    p = e
-    for g in reversed(lengths):
+            numeric = g.label == "number"
+            field, s = field.adjoin_sqrt(q, "positive" if numeric else "either", g.label)
+            if numeric:
+                names[field.gens[-1].slot] = g
+        images[g.slot] = s
+    p = _at(t.equation, t, images, field).num
+    for g in reversed([g for g in field.gens if g.label != "number"]):
         tick()
         if p.degrees()[g.slot] <= 0:
             continue
         a, b = ring.linear_parts(p, g.slot)
         p = ring.primitive(field.reduce(a * a - b * b * square_of(g)))
-    return (_without_powers(p, field), *(g.modulus for g in field.gens if g.label == "number"))
+    back = {slot: ring.gen(g.index) for slot, g in names.items()}
+    return (ring.replaced(_without_powers(p, field), back), *_numbers(t))
+
+
+def _at(p: Poly, t: Thesis, images: dict[int, Element], field: Tower) -> Element:
+    """A polynomial in coordinates and symbols at the symbols' images (Horner)."""
+    k = ring.top_gen(p)
+    if k < 0:
+        return field.element(p)
+    slot = ring.gen_slot(k)
+    out = field.constant(0)
+    for c in reversed(ring.coefficients(p, slot)):
+        out = out * images[slot] + _at(c, t, images, field)
+    return out
 
 
 def _without_powers(p: Poly, field: Tower) -> Poly:

@@ -19,7 +19,7 @@ from ..figure.conditions import equations
 from ..figure.plane import Vec
 from ..figure.quantities import value
 from ..figure.reader import Reader
-from ..sheet.tree import Comparison, Relation
+from ..sheet.tree import Comparison, PointRef, Relation
 
 MAX_PARTS = 4096
 
@@ -71,11 +71,22 @@ class _Fork(Exception):
 class _Signed(Reader):
     """Reads quantities with a prescribed sign for every dependent length."""
 
-    def __init__(self, comp: Component, choices: tuple[int, ...]) -> None:
+    def __init__(self, comp: Component, choices: tuple[int, ...], separate: bool) -> None:
         self.comp = comp.copy()
+        self.separate = separate
+        self.name: object = None
         self.choices = choices
         self.folds: list[tuple[Element, int]] = []
-        self.known: dict[str, Element] = {}
+        self.known: dict[object, Element] = {}
+
+    def span(self, a: PointRef, b: PointRef) -> Element:
+        """A distance; with `separate` an unknown of its own even if its square is met before."""
+        if self.separate:
+            self.name = frozenset((str(a), str(b)))
+        try:
+            return super().span(a, b)
+        finally:
+            self.name = None
 
     def _folded(self, s: Element) -> Element:
         if len(self.folds) == len(self.choices):
@@ -88,7 +99,7 @@ class _Signed(Reader):
         """A length whose square is e^2."""
         if e.is_zero():
             return e
-        name = (e * e).key()
+        name = None, (e * e).key()
         if name not in self.known:
             self.known[name] = self._folded(e)
         return self.known[name]
@@ -97,7 +108,7 @@ class _Signed(Reader):
         """A length whose square is q."""
         if q.is_zero():
             return q
-        name = q.key()
+        name = self.name, q.key()
         if name not in self.known:
             s = roots.sqrt(q, self.comp.tower)
             if s is not None:
@@ -116,15 +127,19 @@ class _Signed(Reader):
 
 
 def parts(
-    comp: Component, claim: Comparison | Relation, tick: Callable[[], None] = lambda: None
+    comp: Component,
+    claim: Comparison | Relation,
+    tick: Callable[[], None] = lambda: None,
+    separate: bool = True,
 ) -> list[Part]:
-    """All parts of one component for an equality."""
+    """All parts of one component for an equality.  With `separate` every distance is an unknown
+    of its own; without, distances with the same square are one."""
     out: list[Part] = []
     pending: list[tuple[int, ...]] = [()]
     while pending and len(out) < MAX_PARTS:
         tick()
         choices = pending.pop()
-        r = _Signed(comp, choices)
+        r = _Signed(comp, choices, separate)
         try:
             if isinstance(claim, Relation):
                 true = opposite = all(e.is_zero() for e in equations(claim, r) or ())

@@ -42,10 +42,12 @@ def algebraic_side(
     """Statuses over the components of full dimension; a component is called real when a real
     figure of the survey has its lengths signed as the component has them."""
     found: list[Part] = []
+    whole: list[Part] = []
     minimal: list[Part] = []
     reports: list[ComponentReport] = []
     for c in comps:
-        mine = parts(c, claim, tick)
+        mine = parts(c, claim, tick, separate=False)
+        whole += parts(c, claim, tick)
         here = sorted((p for p in places if p.comp is c), key=lambda p: not p.truths[0])
         real = [any(_literal(part, p) for p in here) for part in mine]
         found += mine
@@ -55,7 +57,7 @@ def algebraic_side(
         for part, r in zip(mine, real, strict=True):
             status = Status.TRUE if part.true else Status.FALSE
             reports.append(ComponentReport(part.degree, status.value, part.signs, r))
-    named = {k: v.value for k, v in statuses(found, minimal).items()}
+    named = {k: v.value for k, v in statuses(whole, minimal).items()}
     on = frozenset(id(p.comp) for p in minimal if p.true)
     return AlgebraicSide(named, tuple(reports[:LISTED]), len(found), sum(p.true for p in found), on)
 
