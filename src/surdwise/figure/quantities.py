@@ -210,6 +210,13 @@ def _bisector(r: Reader, q: Measure) -> Element:
     return r.divide(r.root(inner), s, "the angle is not defined")
 
 
+def _bisector2(r: Reader, q: Measure) -> Element:
+    a, b, c = _turned(q)
+    y, z = r.span(c, a), r.span(a, b)
+    s = y + z
+    return r.divide(y * z * 2 * (y * z + r.lean(a, b, c)), s * s, "the angle is not defined")
+
+
 def _cos(r: Reader, q: Measure) -> Element:
     b, a, c = q.points
     return r.divide(r.lean(a, b, c), r.span(a, b) * r.span(a, c), "the angle is not defined")
@@ -253,5 +260,6 @@ SQUARES: dict[str, Callable[[Reader, Measure], Element]] = {
     "circumradius": _circumradius2,
     "median": _median2,
     "altitude": _altitude2,
+    "bisector": _bisector2,
     "sin": _sin2,
 }

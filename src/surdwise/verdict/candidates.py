@@ -78,6 +78,8 @@ def _incidences(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candi
 
 def says_the_same(c: Condition, claim: Condition) -> bool:
     """Whether a condition compares just what the claim compares: no news as a side condition."""
+    if isinstance(c, (And, Or)):
+        return any(says_the_same(x, claim) for x in c.args)
     if not isinstance(c, Comparison) or not isinstance(claim, Comparison):
         return c == claim
     return _sides_of(c) == _sides_of(claim)

@@ -138,6 +138,8 @@ def _explained(
     where, exact_ = [w for w, _, _ in said_], [e for _, e, _ in said_]
     if out.verdict in (Verdict.CONDITIONAL, Verdict.FAILS):
         out = replace(out, condition=where[0], in_frame=said_[0][2])
+        if where[0] is None:
+            out = replace(out, reason="the verdict is proved; no short name was found for where it holds")
     if len(parts) == 1 and n == 2:
         settled = not found.not_examined or where[1] != "never"
         out = replace(out, equality=where[1] if settled else None)
@@ -233,7 +235,13 @@ def _signed_forms(claim: Comparison) -> list[Condition]:
 
 def _parameters(prog: Program, found: Survey) -> tuple[str, ...]:
     used = sorted({k for p in found.places for k in p.comp.free})
-    return tuple(f"{PARAM_NAMES[k]}: {prog.frame.labels.get(k, '')}" for k in used)
+    out = []
+    for k in used:
+        at_zero = any(k in p.comp.folded for p in found.places)
+        positive = all(k in p.comp.positive for p in found.places if k in p.comp.free)
+        range_ = f", {PARAM_NAMES[k]} {'>=' if at_zero else '>'} 0" if positive else ""
+        out.append(f"{PARAM_NAMES[k]}: {prog.frame.labels.get(k, '')}{range_}")
+    return tuple(out)
 
 
 def _frame(prog: Program, found: Survey) -> str:
@@ -241,7 +249,10 @@ def _frame(prog: Program, found: Survey) -> str:
         spots = []
         for n, v in list(p.comp.points.items())[:3]:
             spots.append(f"{n} = ({_coordinate(v.x)}, {_coordinate(v.y)})")
+        halved = ", ".join(t.split(", ")[-1] for t in _parameters(prog, found) if t.endswith(" 0"))
         scale = "" if prog.frame.keeps_scale else ", up to similarity"
+        if halved:
+            scale += f" and reflection ({halved})" if scale else f", up to reflection ({halved})"
         return FRAME_NAMES[prog.frame.kind] + ": " + ", ".join(spots) + scale
     return FRAME_NAMES[prog.frame.kind]
 

@@ -73,6 +73,16 @@ class Spot(Judge):
         self.origin = "thesis"
         self._roots: dict[str, Element] = {}
         self._signs: dict[int, tuple[Element, int]] = {}
+        self.doubts: dict[str, Element] = {}
+
+    def doubtful(self) -> set[str]:
+        """What the statements read so far must not meet, in words: divisors and coinciding points
+        that the figure's own requirements do not exclude."""
+        shut: set[str] = set()
+        for r in self.comp.requires:
+            if r.op in ("!=", ">"):
+                shut |= set(self._factors(r.element))
+        return {w for w, e in self.doubts.items() if not set(self._factors(e)) <= shut}
 
     def kept(self, name: object, make: Callable[[], Element]) -> Element:
         """An element that depends on no sign, computed once for the component."""
@@ -168,6 +178,7 @@ class Spot(Judge):
         if b.is_rational():
             return a / b
         self._enter("thin", b)
+        self.doubts[words] = b
         name = "1/" + b.key()
         if name not in self.comp.memo:
             self.comp.memo[name] = Element(self.comp.tower, b.num, b.den).inverse()
@@ -180,6 +191,7 @@ class Spot(Judge):
             raise Undefined(words)
         if not d.is_rational():
             self._enter("avoid", d)
+            self.doubts[words] = d
 
     def polynomial(self, p: Poly) -> Element:
         """A polynomial of the frame's parameters; KeyError for one without a value here."""

@@ -217,6 +217,8 @@ class Surveyor:
         except Undefined as e:
             self.result.undefined.add(str(e))
             return None
+        if depth == 0:
+            self.result.undefined |= spot.doubtful()
         return Place(len(comp.free), comp, branch, truths, depth)
 
     def _order(self, comp: Component, register: Register) -> list[int]:
