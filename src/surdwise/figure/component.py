@@ -194,6 +194,10 @@ class Builder(Reader):
         self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", f"step {self.step}")
         return r
 
+    def nonnegative(self, q: Element) -> None:
+        """Demand q >= 0."""
+        self.require(q, ">=", "a square root of a negative quantity")
+
     def either_root(self, d: Element) -> Element:
         """Any real square root of d: two components if d is a square, else one extension."""
         if d.is_zero():

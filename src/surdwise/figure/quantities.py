@@ -26,7 +26,10 @@ def value(q: Quantity, r: Reader) -> Element:
         x = value(q.arg, r)
         if q.op == "neg":
             return -x
-        return r.root(x) if q.op == "sqrt" else r.absolute(x)
+        if q.op == "abs":
+            return r.absolute(x)
+        r.nonnegative(x)
+        return r.root(x)
     if q.op == "^":
         n = exponent(q.right)
         if n % 2 == 0 and n:

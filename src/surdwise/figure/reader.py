@@ -34,6 +34,10 @@ class Reader(ABC):
     def root(self, q: Element) -> Element:
         """The non-negative square root of q."""
 
+    def nonnegative(self, q: Element) -> None:
+        """Demand that a quantity under a written square root is not negative (squares of lengths
+        never are and are not asked)."""
+
     @abstractmethod
     def divide(self, a: Element, b: Element, words: str) -> Element:
         """a/b, defined where b is not zero; `words` say what b = 0 means."""

@@ -157,14 +157,15 @@ class Spot(Judge):
             self._roots[name] = self._root(q)
         return self._roots[name]
 
+    def nonnegative(self, q: Element) -> None:
+        """Undefined where q is negative."""
+        if self._sign(q, "domain") < 0:
+            raise Undefined("a square root of a negative quantity")
+
     def _root(self, q: Element) -> Element:
         r = roots.sqrt(q, self.comp.tower)
         if r is not None:
             return self.absolute(r)
-        if cells.known_sign(q.num, self.comp.positive) * cells.known_sign(q.den, self.comp.positive) <= 0:
-            s = self._sign(q, "domain")
-            if s < 0:
-                raise Undefined("a square root of a negative quantity")
         self.comp.tower, r = self.comp.tower.adjoin_sqrt(q, "positive", READ)
         orient = self.comp.tower.gens[-1].orient
         if not ring.is_constant(orient):
