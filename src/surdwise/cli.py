@@ -23,6 +23,8 @@ app = typer.Typer(
 )
 
 BAD_SHEET = 2
+DEFAULT_SECONDS = 60.0
+GRACE = 0.5  # seconds that the work has to come to its own stop before it is killed
 
 Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default=False)]
 TimeLimit = Annotated[
@@ -120,29 +122,28 @@ def decide(
 
 
 def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: str | None) -> list:  # type: ignore[type-arg]
-    """Decisions of one sheet, in a killable process where limits are asked for."""
+    """Decisions of one sheet, each claim in a process that is killed when its time is up."""
     from dataclasses import replace
 
-    from .api import decide as work
+    from .figure.program import frames_for
+    from .limits import LimitReached, run_guarded, run_limited
     from .sheet import show
     from .verdict.outcome import Decision, Verdict
 
-    if seconds is None and mebibytes is None:
-        try:
-            return list(work(sheet, progress=_progress(), frame=frame))
-        except SurdwiseError as e:
-            _usage(str(e))
-    from .limits import LimitReached, run_limited
-
+    if frame is not None and frame not in frames_for(sheet):
+        _usage(f"expected one of {', '.join(frames_for(sheet))} after --frame, got {frame!r}")
+    soft = DEFAULT_SECONDS if seconds is None else seconds
     out = []
     for line in sheet.claims:
         one = replace(sheet, claims=(line,))
-        hard = None if seconds is None else seconds + 0.5
         try:
-            out += run_limited(_decide_all, one, seconds or 60.0, frame, seconds=hard, mebibytes=mebibytes)
+            if seconds is None and mebibytes is None:
+                out += run_guarded(_decide_all, one, soft, frame, seconds=soft + GRACE)
+            else:
+                out += run_limited(_decide_all, one, soft, frame, seconds=soft + GRACE, mebibytes=mebibytes)
         except LimitReached as e:
+            why = f"{e} ({soft:g} s)" if "time" in str(e) else str(e)
             text = show(line.body)
-            why = f"{e} ({seconds:g} s)" if seconds is not None and "time" in str(e) else str(e)
             out.append(Decision(sheet.file, sheet.title, text, Verdict.UNDECIDED, reason=why))
     return out
 
@@ -159,6 +160,8 @@ def rewrite(
     to: Annotated[str, typer.Option("--to", help="text, latex, sympy or singular.")] = "text",
 ) -> None:
     """Rewrite every claim free of roots, in five formulations."""
+    from dataclasses import replace
+
     from .api import rewrite as work
     from .printing import table
     from .thesis.export import EXPORTS
@@ -173,7 +176,10 @@ def rewrite(
     script = to in ("sympy", "singular")
     mark = {"sympy": "# ", "singular": "// ", "latex": "% ", "text": ""}[to]
     for s in _read(sheet):
-        for r in work(s, forms, decided=form is None and to == "text"):
+        decided = _decided(s, None, None, None) if form is None and to == "text" else []
+        for i, r in enumerate(work(s, forms)):
+            if decided:
+                r = replace(r, statuses=decided[i].algebraic, variants=decided[i].variants)
             print(f"{mark}claim {r.claim}")
             if r.thesis is None:
                 print(f"{mark}not rewritten: {r.why_not}")

@@ -69,6 +69,17 @@ def test_time_limit_stops_the_work(tmp_path: Path) -> None:
     assert time.monotonic() - start < 20
 
 
+def test_time_limit_reaches_into_one_long_computation(tmp_path: Path) -> None:
+    """A single elimination that never looks at the clock is stopped all the same."""
+    heavy = tmp_path / "heavy.claim"
+    heavy.write_text("given triangle ABC\ngiven P inside triangle ABC\nclaim |PA| + |PB| < |CA| + |CB|\n")
+    start = time.monotonic()
+    done = run("decide", heavy, "--time-limit", "2", "--json")
+    assert done.returncode == 3
+    assert json.loads(done.stdout)["reason"]
+    assert time.monotonic() - start < 15
+
+
 def test_memory_limit_stops_the_work(tmp_path: Path) -> None:
     heavy = tmp_path / "heavy.claim"
     heavy.write_text(

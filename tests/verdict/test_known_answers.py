@@ -175,6 +175,39 @@ def test_witness_keeps_off_excluded_places() -> None:
     assert len(set(spots)) == 4
 
 
+def test_written_roots_have_a_domain() -> None:
+    """sqrt of a quantity that is negative on a region: once `undecided`, since the root adjoined
+    on the region where it is real was read on the other too."""
+    (sheet,) = read(
+        "given points A, B\ngiven C on line AB\nclaim sqrt(|AC| - |CB|) > 0\n"
+        "claim sqrt(|AC| - |CB|) <= sqrt(|AB|)\n"
+    )
+    one, two = decide(sheet)
+    assert (one.verdict, one.condition) == (Verdict.CONDITIONAL, "|AC| > |BC|")
+    assert two.verdict is Verdict.HOLDS
+    assert "a square root of a negative quantity" in two.degenerate
+
+
+def test_ranges_of_parameters_are_said() -> None:
+    """A condition in the frame is true as printed only with the range of the folded parameter."""
+    (sheet,) = read("given triangle ABC\nclaim sin(BAC) > cos(BAC)\n")
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.CONDITIONAL
+    assert any(t.endswith("u1 > 0") for t in d.parameters)
+    assert "reflection" in d.frame
+
+
+def test_undefined_positions_are_listed() -> None:
+    """Thales: P = A and P = B both leave an angle undefined."""
+    (sheet,) = read(
+        "given points A, B\ngiven k = circle with diameter AB\ngiven P on circle k\n"
+        "claim PA perpendicular to PB\n"
+    )
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.HOLDS
+    assert {"P = A", "P = B"} <= set(d.degenerate)
+
+
 def test_chain_has_links() -> None:
     """r <= R/2 <= R: two links, one with equality for equilateral triangles, one never equal."""
     (sheet,) = read("given triangle ABC\nclaim inradius(ABC) <= circumradius(ABC)/2 < circumradius(ABC)\n")

@@ -34,7 +34,7 @@ class Reader(ABC):
     def root(self, q: Element) -> Element:
         """The non-negative square root of q."""
 
-    def nonnegative(self, q: Element) -> None:
+    def nonnegative(self, q: Element) -> None:  # noqa: B027
         """Demand that a quantity under a written square root is not negative (squares of lengths
         never are and are not asked)."""
 
