@@ -10,6 +10,7 @@ from surdwise import Sheet, decide
 from surdwise.sheet import read_file, read_text
 from surdwise.sheet.tree import Fact
 
+from .handbook import HANDBOOK
 from .judge import complaints
 from .sheets import SHEETS
 
@@ -18,9 +19,9 @@ EXAMPLES = Path(__file__).parents[2] / "examples"
 
 def all_sheets() -> list[tuple[str, Sheet]]:
     out = [(p.name, s) for p in sorted(EXAMPLES.glob("*.claim")) for s in read_file(p)]
-    for text in SHEETS:
+    for text in (*SHEETS, *HANDBOOK):
         for s in read_text(text.strip() + "\n", "sheets.py"):
-            out.append((s.title, s))
+            out.append((s.title or s.claims[0].text, s))
     return out
 
 

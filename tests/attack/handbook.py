@@ -1,6 +1,7 @@
-"""More sheets for the comparison with random figures; sources beside each, all from memory."""
+"""Handbook statements for the comparison with random figures; sources beside each, all from
+memory."""
 
-SHEETS = [
+HANDBOOK = [
     # Apollonius: the median's length
     "given triangle ABC\nclaim 4median(ABC, A)^2 = 2|AB|^2 + 2|AC|^2 - |BC|^2",
     # Ptolemy
