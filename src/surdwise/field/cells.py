@@ -205,8 +205,10 @@ def gaps(polys: list[fmpz_poly], positive: bool) -> list[Gap]:
     low: Rational | None = fmpq(0) if positive else None
     out: list[Gap] = []
     for r in roots:
-        out.append((low, _rational(r.lower())))
-        low = _rational(r.upper())
+        # ends as exact rationals: a ball's own bounds would be rounded at the ambient precision
+        middle, radius = _rational(r.mid()), _rational(r.rad())
+        out.append((low, middle - radius))
+        low = middle + radius
     out.append((low, None))
     return out
 

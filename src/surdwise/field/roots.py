@@ -113,7 +113,14 @@ def _sqrt(e: Element, k: int) -> Element | None:
 
 
 def _sqrt_by_factoring(e: Element, k: int) -> Element | None:
-    """Square root where the top step is not quadratic: factor x^2 - e over the tower."""
+    """Square root where the top step is not quadratic: factor x^2 - e over the tower.
+
+    Lemma: an extension of odd degree makes no non-square of the field below a square, since
+    x^2 - e stays irreducible where 2 does not divide the degree.
+    """
+    top = e.tower.gens[k - 1]
+    if top.degree % 2 and e.num.degrees()[top.slot] <= 0:
+        return _sqrt(e, k - 1)
     t = e.tower.lower(k)
     p, _ = norm(Element(t, e.num, e.den))
     q = ring.square_root(p * e.den**t.degree)

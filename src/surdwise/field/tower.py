@@ -228,8 +228,9 @@ class _Point:
         cs = [self.value(c) for c in ring.coefficients(step.modulus, step.slot)]
         if any(c is None for c in cs):
             return None
-        for f, _ in nmod_poly([int(c) for c in cs if c is not None], self.prime).factor()[1]:
-            if f.degree() == 1:
+        for f, m in nmod_poly([int(c) for c in cs if c is not None], self.prime).factor()[1]:
+            # a multiple root is no place of the tower: squares need not stay residues there
+            if f.degree() == 1 and m == 1:
                 return int(-f[0] / f[1]) % self.prime
         return None
 

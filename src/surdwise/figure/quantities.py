@@ -21,6 +21,7 @@ def value(q: Quantity, r: Reader) -> Element:
     if isinstance(q, Number):
         return r.number(q.value)
     if isinstance(q, Measure):
+        r.measuring(q)
         return MEASURES[q.kind](r, q)
     if isinstance(q, Unary):
         x = value(q.arg, r)

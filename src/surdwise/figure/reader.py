@@ -13,7 +13,7 @@ from fractions import Fraction
 from typing import TYPE_CHECKING
 
 from ..field.tower import Element
-from ..sheet.tree import CentreOf, Named, PointRef, Pt, Through
+from ..sheet.tree import CentreOf, Measure, Named, PointRef, Pt, Through
 from ..sheet.tree import Curve as CurveRef
 from .plane import Round, Straight, Vec, cross, dot, orientation, square
 
@@ -33,6 +33,9 @@ class Reader(ABC):
     @abstractmethod
     def root(self, q: Element) -> Element:
         """The non-negative square root of q."""
+
+    def measuring(self, q: Measure) -> None:  # noqa: B027
+        """Called before a measured quantity is read, for readers that keep quantities apart."""
 
     def nonnegative(self, q: Element) -> None:  # noqa: B027
         """Demand that a quantity under a written square root is not negative (squares of lengths

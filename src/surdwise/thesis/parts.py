@@ -19,7 +19,7 @@ from ..figure.conditions import equations
 from ..figure.plane import Vec
 from ..figure.quantities import value
 from ..figure.reader import Reader
-from ..sheet.tree import Comparison, PointRef, Relation
+from ..sheet.tree import Comparison, Measure, PointRef, Relation
 
 MAX_PARTS = 4096
 
@@ -81,12 +81,18 @@ class _Signed(Reader):
 
     def span(self, a: PointRef, b: PointRef) -> Element:
         """A distance; with `separate` an unknown of its own even if its square is met before."""
+        outer = self.name
         if self.separate:
             self.name = frozenset((str(a), str(b)))
         try:
             return super().span(a, b)
         finally:
-            self.name = None
+            self.name = outer
+
+    def measuring(self, q: Measure) -> None:
+        """The same for every other measured quantity."""
+        if self.separate:
+            self.name = q.kind, q.points, q.line
 
     def _folded(self, s: Element) -> Element:
         if len(self.folds) == len(self.choices):
@@ -99,7 +105,7 @@ class _Signed(Reader):
         """A length whose square is e^2."""
         if e.is_zero():
             return e
-        name = None, (e * e).key()
+        name = self.name, (e * e).key()
         if name not in self.known:
             self.known[name] = self._folded(e)
         return self.known[name]
