@@ -22,7 +22,6 @@ PARAM_NAMES = [f"u{k}" for k in range(MAX_PARAMS)]
 _NAMES = GEN_NAMES[::-1] + PARAM_NAMES
 CTX = fmpq_mpoly_ctx.get(_NAMES, "lex")
 _VARS = CTX.gens()
-NVARS = len(_NAMES)
 
 Poly: TypeAlias = fmpq_mpoly
 Rational: TypeAlias = fmpq

@@ -277,10 +277,6 @@ class Builder(Reader):
             y = self.param(f"y of {ref.name}")
         c.points[ref.name] = Vec(x, y)
 
-    def unit(self, label: str) -> Element:
-        """The first side of a shape placed on an empty sheet."""
-        return self.param(label, positive=True) if self.frame.keeps_scale else self.number(1)
-
     def circle_through(self, a: Pt, b: Pt, c: Pt) -> Round:
         """Circumcircle of three points."""
         return self.circle(Through((a, b, c)))

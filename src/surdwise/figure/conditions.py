@@ -6,6 +6,7 @@ theses at one real figure, through a `Judge` that proves signs.  Exact.
 
 from __future__ import annotations
 
+from abc import abstractmethod
 from collections.abc import Callable
 from itertools import combinations
 from typing import Any
@@ -20,21 +21,21 @@ from .reader import Reader
 class Judge(Reader):
     """A reader that can tell the sign of an element at its figure."""
 
+    @abstractmethod
     def sign(self, e: Element) -> int:
         """Proved sign of e: -1, 0 or 1."""
-        raise NotImplementedError
 
+    @abstractmethod
     def weak_sign(self, e: Element) -> int:
         """The same, for a comparison that admits equality."""
-        raise NotImplementedError
 
+    @abstractmethod
     def polynomial(self, p: Any) -> Element:
         """The value of a polynomial in the frame's parameters."""
-        raise NotImplementedError
 
+    @abstractmethod
     def zero(self, e: Element) -> bool:
         """Whether e vanishes on the whole cell of the figure."""
-        raise NotImplementedError
 
 
 # ---------------------------------------------------------------- what must vanish
@@ -45,7 +46,7 @@ def _collinear(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
 
 
 def _concyclic(r: Reader, pts: tuple[Pt, ...]) -> list[Element]:
-    return [r.incircle(pts[0], pts[1], pts[2], d) for d in pts[3:]]
+    return [r.circle_test(pts[0], pts[1], pts[2], d) for d in pts[3:]]
 
 
 def _parallel(r: Reader, a: Any, b: Any) -> list[Element]:

@@ -116,9 +116,6 @@ class Program:
         return Component(base.tower, base.values, (), requires=tuple(requires))
 
 
-FRAMES = ("cartesian", "sides")
-
-
 def frames_for(sheet: Sheet) -> list[str]:
     """The frames that can hold a sheet: side lengths need a free triangle placed first."""
     first = sheet.given[0].body if sheet.given else None

@@ -65,7 +65,7 @@ class Reader(ABC):
         """Scalar product of the vectors from a to b and c."""
         return self.kept(("lean", a, b, c), lambda: dot(self.at(b) - self.at(a), self.at(c) - self.at(a)))
 
-    def incircle(self, a: PointRef, b: PointRef, c: PointRef, d: PointRef) -> Element:
+    def circle_test(self, a: PointRef, b: PointRef, c: PointRef, d: PointRef) -> Element:
         """The determinant that vanishes when four points lie on a circle (or three of them, a,
         b, c, on a line with d on it too): sum of squared distances from d times signed areas."""
 
@@ -73,7 +73,7 @@ class Reader(ABC):
             p, q, s = (self.at(x) - self.at(d) for x in (a, b, c))
             return square(p) * cross(q, s) + square(q) * cross(s, p) + square(s) * cross(p, q)
 
-        return self.kept(("incircle", a, b, c, d), make)
+        return self.kept(("circle test", a, b, c, d), make)
 
     def offset(self, p: PointRef, ref: CurveRef) -> Element:
         """Signed area of a line's direction and the way from the line to p."""

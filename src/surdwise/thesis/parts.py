@@ -41,7 +41,6 @@ class Status(Enum):
     FALSE = "generally false"
     PARTS = "true on parts and false on parts"
     NONE = "no component dominates"
-    OPEN = "not examined"
 
 
 @dataclass(frozen=True)

@@ -350,11 +350,6 @@ def _repeats(c: Comparison) -> bool:
     return len(seen) != len(set(seen))
 
 
-def negated(c: Condition) -> Condition:
-    """The negation, without doubling."""
-    return c.arg if isinstance(c, Not) else Not(c)
-
-
 def all_of(cs: Sequence[Condition]) -> Condition:
     """Conjunction."""
     return cs[0] if len(cs) == 1 else And(tuple(cs))

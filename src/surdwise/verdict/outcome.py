@@ -71,11 +71,6 @@ class Link:
     fails_at: Figure | None
 
 
-STATUS_TRUE = "generally true"
-STATUS_FALSE = "generally false"
-STATUS_PARTS = "true on parts and false on parts"
-
-
 @dataclass(frozen=True)
 class Decision:
     """The full answer to one claim; fields as in the command's JSON."""

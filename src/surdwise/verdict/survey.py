@@ -9,7 +9,7 @@ matters becomes one more equation on the same figure: the same engine runs one d
 from __future__ import annotations
 
 import time
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 
 from ..field import cells, ring
@@ -229,8 +229,3 @@ class Surveyor:
             return sum(max(p.degrees()[slot], 0) for p in register.borders()), -k
 
         return sorted(comp.free, key=weight, reverse=True)
-
-
-def admitted(places: Sequence[Place], dimension: int) -> Iterator[Place]:
-    """Places of one dimension."""
-    return (p for p in places if p.dimension == dimension)

@@ -8,7 +8,6 @@ the grammar, one row of `sheet/forms.py` and one function here.
 from __future__ import annotations
 
 from collections.abc import Callable
-from typing import Any
 
 Construction = Callable[..., None]
 CONSTRUCTIONS: dict[str, Construction] = {}
@@ -25,6 +24,3 @@ def form(*names: str) -> Callable[[Construction], Construction]:
         return fn
 
     return enter
-
-
-Arg = Any
