@@ -216,3 +216,14 @@ def test_chain_has_links() -> None:
     assert [x.verdict for x in d.links] == [Verdict.HOLDS, Verdict.HOLDS]
     assert d.links[0].equality == "|AB| = |AC| and |AB| = |BC|"
     assert d.links[1].equality == "never"
+
+
+def test_never_is_not_said_of_what_was_not_examined() -> None:
+    """A border that was not looked at may hold figures: `never` was once said all the same, though
+    the other frame finds the claim true on a thin set."""
+    (sheet,) = read(
+        "given triangle ABC\ngiven X = incentre of CAB\ngiven Y on line CB\nclaim |YC|*|CA| = |CX|*|BC|\n"
+    )
+    (d,) = decide(sheet, frame="cartesian", time_limit=30)
+    assert d.verdict in (Verdict.FAILS, Verdict.UNDECIDED)
+    assert d.condition != "never"

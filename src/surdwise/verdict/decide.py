@@ -98,6 +98,8 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
         out = _explained(case, whats, parts, found, out, side)
     except OutOfTime:
         out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")
+    late = [f"{w}: not examined" for w in sorted(case.unexamined)]
+    out = replace(out, degenerate=tuple(dict.fromkeys((*out.degenerate, *late))))
     total, true = (side.total, side.true) if side is not None else (0, 0)
     return replace(out, explanation=explain(out, total, true))
 
@@ -197,7 +199,8 @@ def _where(
         if truths == {True}:
             out[i] = ("always", True, False)
         elif truths == {False}:
-            out[i] = ("never", True, False)
+            # true nowhere that was looked at; `never` only if everything was
+            out[i] = (None if found.not_examined else "never", True, False)
         else:
             todo.append(i)
     if todo:

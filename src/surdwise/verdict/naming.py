@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import time
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 from ..field import ring
 from ..field.ball import between, branch_parameters
@@ -48,6 +48,7 @@ class Case:
     deadline: float
     progress: Callable[[str], None]
     lexicon: Lexicon | None = None
+    unexamined: set[str] = field(default_factory=set)
 
     def tick(self) -> None:
         """Stop when time is out."""
@@ -123,6 +124,7 @@ class Case:
                     pools[i] = [*pools[i], *news]
                 else:
                     answers[i] = Name(guesses[i], not wrong)
+                    self.unexamined |= set(proof.not_examined)
                     open_.discard(i)
         return answers
 
