@@ -43,7 +43,7 @@ HANDBOOK = [
     # Apollonius circle
     "given points A, B\ngiven point P\ngiven |PA| = 2|PB|\nclaim |PA| > |PB|",
     # a hypothesis that leaves a segment
-    "given points A, B, P\ngiven |PA| + |PB| = |AB|\nclaim dist(P, AB) < |AB|/1000",
+    "given points A, B, P\ngiven |PA| + |PB| = |AB|\nclaim dist(P, AB) < |AB|/10",
     # empty: the triangle inequality
     "given triangle ABC\ngiven |AB| = |AC| + |BC|\nclaim |AB| = |AC|",
     # three regions of a line for two fixed points
