@@ -73,7 +73,7 @@ def _dense(degree: int, params: int, bits: int, rng: random.Random):  # type: ig
     terms = {}
     for powers in product(range(degree + 1), repeat=params):
         if sum(powers) <= degree:
-            mono = [0] * ring.NVARS
+            mono = [0] * (ring.MAX_GENS + ring.MAX_PARAMS)
             for k, e in enumerate(powers):
                 mono[ring.param_slot(k)] = e
             terms[tuple(mono)] = fmpq(rng.getrandbits(max(bits, 1)) + 1)
