@@ -8,12 +8,13 @@ from dataclasses import dataclass, field
 
 from ..field import ring
 from ..field.ball import between, branch_parameters
+from ..field.real import Branch
 from ..figure.component import Component
 from ..figure.conditions import Judge, is_open, truth
 from ..figure.program import Program
 from ..sheet.tree import Condition, Relation, Sheet
 from .candidates import Candidate, candidates
-from .spot import Undefined
+from .spot import Register, Spot, Undefined
 from .survey import OutOfTime, Place, Statement, Survey, Surveyor
 from .words import Lexicon, in_frame, name
 
@@ -55,9 +56,17 @@ class Case:
         if time.monotonic() > self.deadline:
             raise OutOfTime
 
-    def survey(self, statements: Sequence[Statement], closed: bool, shallow: bool = False) -> Survey:
-        """Survey all admitted figures (or open cells only) for some statements."""
+    def survey(
+        self,
+        statements: Sequence[Statement],
+        closed: bool,
+        shallow: bool = False,
+        where: Sequence[Condition] = (),
+    ) -> Survey:
+        """Survey all admitted figures (or open cells only; or those `where` conditions hold
+        besides) for some statements."""
         conditions: list[Condition] = [line.body for line in self.sheet.provided]  # type: ignore[misc]
+        conditions += where
         return Surveyor(
             self.program,
             [statement(c) for c in conditions],
@@ -96,6 +105,7 @@ class Case:
         full = max(p.dimension for p in found.places)
         pools = [_varied([(p, bool(p.truths[i])) for p in found.places]) for i in range(len(whats))]
         answers = [Name(None, True)] * len(whats)
+        points = [_points(found, i) for i in range(len(whats))]
         rough: set[int] = set()
         open_ = set(range(len(whats)))
         for _ in range(PROOF_ROUNDS):
@@ -111,6 +121,15 @@ class Case:
             open_ = set(guesses)
             if not guesses:
                 break
+            for i in [i for i in guesses if points[i] is not None]:
+                bad = self._wrong_at_points(whats[i], guesses[i], points[i] or [])
+                pools[i] = [*pools[i], *bad]
+                if not bad:
+                    answers[i] = Name(guesses[i], True)
+                    open_.discard(i)
+                del guesses[i]
+            if not guesses:
+                continue
             keys = list(guesses)
             pairs: list[Statement] = [agrees(whats[i], guesses[i]) for i in keys]
             proof = self.survey([*pairs, *(statement(whats[i]) for i in keys)], closed=False)
@@ -127,6 +146,36 @@ class Case:
                     self.unexamined |= set(proof.not_examined)
                     open_.discard(i)
         return answers
+
+
+    def _wrong_at_points(
+        self, what: Condition, guess: Condition, points: Sequence[Place]
+    ) -> list[tuple[Place, bool]]:
+        """Places where a statement true at single `points` only differs from a guess: points
+        that the guess leaves out, and figures that it lets in.  None is a proof."""
+        out = [(p, True) for p in points if not _says(guess, p)]
+        if out:
+            return out
+        proof = self.survey([statement(what)], closed=False, where=[guess])
+        self.unexamined |= set(proof.not_examined)
+        return [(p, False) for p in proof.places if not p.truths[0]][:30]
+
+
+def _points(found: Survey, i: int) -> list[Place] | None:
+    """The places where statement i is true if they are single figures given exactly, and the
+    survey has left nothing out; else None."""
+    out = [p for p in found.places if p.truths[i]]
+    exact = all(p.dimension == 0 and isinstance(p.branch, Branch) for p in out)
+    full = max(p.dimension for p in found.places)
+    return out if out and exact and full > 0 and not found.not_examined else None
+
+
+def _says(guess: Condition, p: Place) -> bool:
+    assert isinstance(p.branch, Branch)
+    try:
+        return truth(guess, Spot(p.comp, p.branch, Register()))
+    except Undefined:
+        return False
 
 
 def separators(bad: Sequence[tuple[Place, bool]], pool: Sequence[tuple[Place, bool]]) -> list[Candidate]:
@@ -165,9 +214,10 @@ def _guessed(
     plain = [x for x in lits if not in_frame(x.condition)]
     full = max(p.dimension for p, _ in pool)
     short = full - max((p.dimension for p, t in pool if t), default=full)
-    guess = name(target, whole, plain, short)
+    top = sum(1 << k for k, p in enumerate(pts) if p.dimension == full)
+    guess = name(target, whole, plain, short, top)
     if guess is None and with_frame:
-        guess = name(target, whole, lits, short)
+        guess = name(target, whole, lits, short, top)
     return guess
 
 

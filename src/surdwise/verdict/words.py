@@ -14,7 +14,7 @@ from itertools import combinations
 
 from ..field.ball import precise
 from ..field.real import Unsettled
-from ..figure.conditions import truth
+from ..figure.conditions import EQUATIONS, truth
 from ..sheet.show import show
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Relation
 from .candidates import Candidate, all_of, any_of, says_the_same
@@ -92,14 +92,16 @@ def _negative(c: Candidate, mask: int) -> Literal:
     return Literal(_deny(c.condition), mask, c.cost + extra)
 
 
-def name(target: int, whole: int, lits: Sequence[Literal], codimension: int = 0) -> Condition | None:
+def name(
+    target: int, whole: int, lits: Sequence[Literal], codimension: int = 0, top: int = 0
+) -> Condition | None:
     """The cheapest condition found that is true exactly on the target places, or None.
 
-    `codimension` says how many dimensions the target falls short of all figures: a conjunction
-    of fewer equations cannot be right, though no place seen may show it.
+    `codimension` says how many dimensions the target falls short of all figures, those at the
+    `top` places: a conjunction of fewer equations cannot be right, though no place seen may show it.
     """
     if codimension:
-        thin = _thin(target, whole, lits, codimension)
+        thin = _thin(target, whole, lits, codimension, top)
         if thin is not None:
             return thin.condition
     best = _all(target, whole, lits)
@@ -149,18 +151,25 @@ def equations_in(c: Condition) -> int:
         return 2 if isinstance(c.arg, Relation) and c.arg.form == "distinct" else 0
     if isinstance(c, Comparison):
         return int(c.ops[0] == "=")
-    return int(c.args[-1] in ("right", "="))
+    return int(c.form in EQUATIONS or c.args[-1] in ("right", "="))
 
 
-def _thin(target: int, whole: int, lits: Sequence[Literal], codimension: int) -> Literal | None:
-    """Cheapest conjunction with enough equations, or (for several thin pieces) a disjunction."""
+def _in_line(x: Literal, top: int) -> int:
+    c = x.condition
+    return int(isinstance(c, Relation) and c.form == "between" and not x.mask & top)
+
+
+def _thin(target: int, whole: int, lits: Sequence[Literal], codimension: int, top: int) -> Literal | None:
+    """Cheapest conjunction with enough equations, or (for several thin pieces) a disjunction.
+    `C between A and B` is an equation too where it is true at no top place."""
     off = whole & ~target
     over = [x for x in lits if x.mask & target == target]
-    exact = [x for x in over if equations_in(x.condition)][:14]
+    weight = {id(x): equations_in(x.condition) or _in_line(x, top) for x in over}
+    exact = [x for x in over if weight[id(x)]][:14]
     best: Literal | None = None
     for n in (1, 2, 3):
         for some in combinations(exact, n):
-            if sum(equations_in(x.condition) for x in some) < codimension:
+            if sum(weight[id(x)] for x in some) < codimension:
                 continue
             left = off
             for x in some:
