@@ -32,7 +32,10 @@ TimeLimit = Annotated[
     typer.Option("--time-limit", help="Seconds for each claim; the work is killed then.", min=0.01),
 ]
 FrameChoice = Annotated[
-    str | None, typer.Option("--frame", help="cartesian or sides; the cheapest that fits if not given.")
+    str | None,
+    typer.Option(
+        "--frame", help="cartesian, sides, half-angles or incircle; the cheapest that fits if not given."
+    ),
 ]
 MemoryLimit = Annotated[int | None, typer.Option("--memory-limit", help="MiB for each sheet's work.", min=16)]
 

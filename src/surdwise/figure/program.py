@@ -22,6 +22,7 @@ from .conditions import equations
 from .quantities import difference
 from .scale import keeps_scale
 from .vocabulary import CONSTRUCTIONS
+from .vocabulary.placements import CARTESIAN, HALF_ANGLES, kinds_of
 
 
 @dataclass
@@ -117,10 +118,14 @@ class Program:
 
 
 def frames_for(sheet: Sheet) -> list[str]:
-    """The frames that can hold a sheet: side lengths need a free triangle placed first."""
+    """The frames that can hold a sheet, by the shape that is placed first; half angles serve
+    points anywhere on a circle too."""
+    facts = [line.body for line in sheet.given if isinstance(line.body, Fact)]
     first = sheet.given[0].body if sheet.given else None
-    free = isinstance(first, Fact) and first.form == "triangle"
-    return ["cartesian", "sides"] if free else ["cartesian"]
+    kinds = kinds_of(first.form) if isinstance(first, Fact) else []
+    if HALF_ANGLES not in kinds and any(f.form == "on_circle" for f in facts):
+        kinds = [*kinds, HALF_ANGLES]
+    return [CARTESIAN, *kinds]
 
 
 def program(sheet: Sheet, kind: str = "cartesian") -> Program:

@@ -72,11 +72,18 @@ class _Signed(Reader):
 
     def __init__(self, comp: Component, choices: tuple[int, ...], separate: bool) -> None:
         self.comp = comp.copy()
+        self.elements = comp.kept
         self.separate = separate
         self.name: object = None
         self.choices = choices
         self.folds: list[tuple[Element, int]] = []
         self.known: dict[object, Element] = {}
+
+    def kept(self, name: object, make: Callable[[], Element]) -> Element:
+        """An element that depends on no sign, computed once for the component."""
+        if name not in self.elements:
+            self.elements[name] = make()
+        return self.elements[name]
 
     def span(self, a: PointRef, b: PointRef) -> Element:
         """A distance; with `separate` an unknown of its own even if its square is met before."""

@@ -17,7 +17,7 @@ from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
 from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .explain import explain
-from .frames import cheapest_frame
+from .frames import frames_by_cost
 from .naming import Case, statement
 from .outcome import Decision, Link, Variant, Verdict
 from .survey import OutOfTime, Place, Survey
@@ -47,20 +47,60 @@ def decide_claim(
     progress: Callable[[str], None] = lambda text: None,
     frame: str | None = None,
 ) -> Decision:
-    """Decide one claim within a time limit in seconds; `frame` forces a frame, else the
-    cheapest of those that can hold the sheet is taken."""
+    """Decide one claim within a time limit in seconds; `frame` forces a frame.
+
+    Else the frames that can hold the sheet are tried, the cheapest first, until an answer leaves
+    nothing open; of answers with gaps the first of the best kind stands.
+    """
     start = time.monotonic()
     claim: Condition = line.body  # type: ignore[assignment]
-    blank = Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
+    end = start + time_limit
+    best: Decision | None = None
     try:
-        kind = frame or cheapest_frame(sheet, claim)
-        case = Case(sheet, program(sheet, kind), start + time_limit, progress)
-        out = _decided(case, claim, blank)
+        kinds = [frame] if frame else frames_by_cost(sheet, claim)
+    except (TooLarge, TooManyCells) as e:
+        kinds = []
+        best = replace(_blank(sheet, claim), reason=str(e))
+    for i, kind in enumerate(kinds):
+        left = end - time.monotonic()
+        last = i == len(kinds) - 1
+        out = _in_frame(sheet, claim, kind, left if last else left / 2, time_limit, progress)
+        if best is None or _gaps(out) < _gaps(best):
+            best = out
+        if not _gaps(best) or end - time.monotonic() < 0.1 * time_limit:
+            break
+    assert best is not None
+    return replace(best, seconds=round(time.monotonic() - start, 6))
+
+
+def _blank(sheet: Sheet, claim: Condition) -> Decision:
+    return Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
+
+
+def _in_frame(
+    sheet: Sheet,
+    claim: Condition,
+    kind: str,
+    seconds: float,
+    time_limit: float,
+    progress: Callable[[str], None],
+) -> Decision:
+    blank = _blank(sheet, claim)
+    try:
+        case = Case(sheet, program(sheet, kind), time.monotonic() + seconds, progress)
+        return _decided(case, claim, blank)
     except OutOfTime:
-        out = replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
+        return replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
     except (TooLarge, TooManyCells, Unsettled) as e:
-        out = replace(blank, reason=str(e))
-    return replace(out, seconds=round(time.monotonic() - start, 6))
+        return replace(blank, reason=str(e))
+
+
+def _gaps(d: Decision) -> int:
+    """How much an answer leaves open: 0 nothing, 3 everything."""
+    if d.verdict is Verdict.UNDECIDED:
+        return 3
+    unseen = any(w.endswith("not examined") for w in d.degenerate)
+    return unseen + bool(d.reason and d.verdict is not Verdict.EMPTY)
 
 
 def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
@@ -260,7 +300,12 @@ def _frame(prog: Program, found: Survey) -> str:
     return FRAME_NAMES[prog.frame.kind]
 
 
-FRAME_NAMES = {"cartesian": "Cartesian", "sides": "side lengths"}
+FRAME_NAMES = {
+    "cartesian": "Cartesian",
+    "sides": "side lengths",
+    "half-angles": "half angles",
+    "incircle": "about the incircle",
+}
 
 
 def _coordinate(e: Element) -> str:

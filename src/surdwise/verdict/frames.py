@@ -1,45 +1,79 @@
-"""Choose the frame in which a claim costs least: fewest roots left, then lowest degrees."""
+"""Choose the frame in which a claim costs least, by a trial at one figure."""
 
 from __future__ import annotations
 
+from contextlib import suppress
+from itertools import islice
+
 from ..field import cells, ring
 from ..field.real import Unsettled, branches
+from ..field.tower import Element
+from ..figure.component import Component
 from ..figure.conditions import truth
 from ..figure.program import frames_for, program
+from ..figure.vocabulary.placements import HALF_ANGLES
 from ..sheet.tree import Condition, Sheet
 from .spot import Register, Spot, Undefined
 
+NO_FIGURE = (1 << 30, 0)
+# tangents of quarter angles cost in the projection what they save in roots: half-angle degrees count
+# this much more (least total time over the triangle inequalities of the tests and bench/)
+WEIGHT = {HALF_ANGLES: 6}
 
-def cheapest_frame(sheet: Sheet, claim: Condition) -> str:
-    """The frame of least predicted cost; Cartesian where nothing is gained."""
+
+class Trial(Spot):
+    """Reads a statement at one figure and notes how large the borders would be: the degree in
+    the parameters of the norm of each element read, without computing it."""
+
+    def __init__(self, comp: Component, branch: object) -> None:
+        super().__init__(comp, branch, Register())  # type: ignore[arg-type]
+        self.worst = 0
+
+    def _enter(self, kind: str, e: Element) -> None:
+        size = self.comp.tower.degree * max(e.num.total_degree(), 1)
+        self.worst = max(self.worst, size)
+
+
+def frames_by_cost(sheet: Sheet, claim: Condition) -> list[str]:
+    """The frames that can hold the sheet, that of least predicted cost first; Cartesian where
+    nothing is gained."""
     kinds = frames_for(sheet)
     if len(kinds) == 1:
-        return kinds[0]
-    return min(kinds, key=lambda k: (_cost(sheet, claim, k), kinds.index(k)))
+        return kinds
+    return sorted(kinds, key=lambda k: (_cost(sheet, claim, k), kinds.index(k)))
 
 
 def _cost(sheet: Sheet, claim: Condition, kind: str) -> tuple[int, int]:
-    """Degree of the tower that reading the claim at one figure needs, and the total degree of
-    the radicands; a trial, not a bound."""
+    """Predicted degree of the largest border of the claim, and the degree of the tower that
+    reading it needs; a trial, not a bound."""
     run = program(sheet, kind).run()
+    if not run.components:
+        return NO_FIGURE
     worst = (0, 0)
     for comp in run.components[:2]:
-        sample = next(iter(cells.open_cells([], list(comp.free), comp.positive, _spoilers(comp))), {})
-        try:
-            for branch in branches(comp.ground(), sample)[:1]:
-                truth(claim, Spot(comp, branch, Register()))
-        except (Unsettled, Undefined):
-            pass
-        size = sum(g.radicand.total_degree() for g in comp.tower.gens if g.radicand is not None)
-        worst = max(worst, (comp.tower.degree, size))
-    return worst
+        trial = _trial(comp)
+        if trial is not None:
+            with suppress(Unsettled, Undefined):
+                truth(claim, trial)
+            worst = max(worst, (trial.worst, comp.tower.degree))
+    return worst[0] * WEIGHT.get(kind, 1), worst[1]
 
 
-def _spoilers(comp: object) -> list[ring.Poly]:
+def _trial(comp: Component) -> Trial | None:
+    """A reader at some admitted figure."""
+    asked = [r.element.num for r in comp.requires if not ring.has_gens(r.element.num)]
+    for sample in islice(cells.open_cells(asked, list(comp.free), comp.positive, _spoilers(comp)), 30):
+        for branch in branches(comp.ground(), sample)[:1]:
+            trial = Trial(comp, branch)
+            with suppress(Unsettled):
+                if trial.admitted([]):
+                    trial.worst = 0
+                    return trial
+    return None
+
+
+def _spoilers(comp: Component) -> list[ring.Poly]:
     """Differences of parameters: a sample that avoids them has no accidental symmetry."""
-    from ..figure.component import Component
-
-    assert isinstance(comp, Component)
     free = list(comp.free)
     return [ring.param(a) - ring.param(b) for a in free for b in free if a < b] + [
         ring.param(a) for a in free

@@ -122,9 +122,9 @@ class Case:
             if not guesses:
                 break
             for i in [i for i in guesses if points[i] is not None]:
-                bad = self._wrong_at_points(whats[i], guesses[i], points[i] or [])
-                pools[i] = [*pools[i], *bad]
-                if not bad:
+                misses = self._wrong_at_points(whats[i], guesses[i], points[i] or [])
+                pools[i] = [*pools[i], *misses]
+                if not misses:
                     answers[i] = Name(guesses[i], True)
                     open_.discard(i)
                 del guesses[i]
@@ -207,6 +207,9 @@ class Name:
 def _guessed(
     lexicon: Lexicon, pool: Sequence[tuple[Place, bool]], what: Condition, with_frame: bool
 ) -> Condition | None:
+    clear = [(p, t) for p, t in pool if not lexicon.blurred(p)]
+    if len({t for _, t in clear}) == 2:
+        pool = clear  # what is proved afterwards may be proposed from fewer places
     pts = [p for p, _ in pool]
     target = sum(1 << k for k, (_, t) in enumerate(pool) if t)
     whole = (1 << len(pts)) - 1

@@ -39,6 +39,7 @@ class Lexicon:
     def __init__(self, cands: Iterable[Candidate]) -> None:
         self.cands = list(cands)
         self._rows: dict[int, tuple[Place, tuple[bool | None, ...]]] = {}
+        self._blurred: set[int] = set()
 
     def extend(self, cands: Iterable[Candidate]) -> None:
         """Learn more candidate conditions."""
@@ -53,8 +54,22 @@ class Lexicon:
         if id(p) not in self._rows:
             with precise():
                 hint = Hint(p.comp, p.branch)
-                self._rows[id(p)] = p, tuple(_guess(c.condition, hint) for c in self.cands)
+                self._rows[id(p)] = p, tuple(self._guess(c.condition, hint, p) for c in self.cands)
         return self._rows[id(p)][1]
+
+    def blurred(self, p: Place) -> bool:
+        """Whether some candidate could not be read at a place, which is known too roughly."""
+        self.row(p)
+        return id(p) in self._blurred
+
+    def _guess(self, c: Condition, hint: Hint, p: Place) -> bool | None:
+        try:
+            return truth(c, hint)
+        except Unsettled:
+            self._blurred.add(id(p))
+            return None
+        except (Undefined, ZeroDivisionError, KeyError):
+            return None
 
     def literals(self, places: Sequence[Place], but: Condition) -> list[Literal]:
         """Candidates and their negations defined at every place, the cheapest for each set;
@@ -76,13 +91,6 @@ class Lexicon:
                 if old is None or lit.cost < old.cost:
                     best[lit.mask] = lit
         return sorted(best.values(), key=lambda x: x.cost)
-
-
-def _guess(c: Condition, hint: Hint) -> bool | None:
-    try:
-        return truth(c, hint)
-    except (Undefined, Unsettled, ZeroDivisionError, KeyError):
-        return None
 
 
 def _negative(c: Candidate, mask: int) -> Literal:

@@ -8,6 +8,7 @@ from ...field.tower import Element
 from ...sheet.tree import Pt
 from ..component import Builder
 from ..plane import Round, Straight, Vec, cross, dot, orientation, square
+from .placements import HALF_ANGLES
 from .table import form
 
 
@@ -32,7 +33,12 @@ def on_round(b: Builder, p: Pt, k: Round) -> None:
     if b.at_missed_chart():
         b.put(p, k.start)
         return
-    t = b.param(f"cot of the chord angle of {p}")
+    if b.frame.kind == HALF_ANGLES:
+        # chord angles lie in (0, 180 degrees), their halves' tangents in (0, oo)
+        s = b.param(f"tan of half the chord angle of {p}", positive=True)
+        t = (1 - s * s) / (s * 2)
+    else:
+        t = b.param(f"cot of the chord angle of {p}")
     along = d + d.turned() * t
     b.put(p, k.start + along * (2 / (t * t + 1)))
 

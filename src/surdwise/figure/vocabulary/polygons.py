@@ -13,8 +13,9 @@ from itertools import combinations
 from ...field.tower import Element
 from ...sheet.tree import Pt
 from ..component import Builder
-from ..plane import Vec, cross, dot, orientation, square
+from ..plane import cross, dot, orientation, square
 from .on_curves import on_round
+from .placements import placed_by
 from .shapes import missing
 from .table import form
 
@@ -178,6 +179,8 @@ def trapezium(b: Builder, quad: tuple[Pt, ...]) -> None:
 @form("cyclic_quadrilateral")
 def cyclic_quadrilateral(b: Builder, quad: tuple[Pt, ...]) -> None:
     """Concyclic, in that order round the circle."""
+    if placed_by(b, "cyclic_quadrilateral", quad):
+        return
     order = sorted(quad, key=lambda p: not b.has(p.name))
     _ensure(b, order[:3])
     b.require(orientation(*(b.at(p) for p in order[:3])), "!=", ", ".join(map(str, order[:3])) + " collinear")
@@ -188,8 +191,7 @@ def cyclic_quadrilateral(b: Builder, quad: tuple[Pt, ...]) -> None:
 @form("tangential_quadrilateral")
 def tangential_quadrilateral(b: Builder, quad: tuple[Pt, ...]) -> None:
     """Convex with an inscribed circle: |AB| + |CD| = |BC| + |DA| (Pitot)."""
-    if not b.comp.points:
-        _about_incircle(b, quad)
+    if placed_by(b, "tangential_quadrilateral", quad):
         return
     _ensure(b, quad)
     _convex(b, quad)
@@ -198,32 +200,6 @@ def tangential_quadrilateral(b: Builder, quad: tuple[Pt, ...]) -> None:
         b.distance(p, q) + b.distance(r, s) - b.distance(q, r) - b.distance(s, p),
         "the sums of opposite sides differ",
     )
-
-
-def _about_incircle(b: Builder, quad: tuple[Pt, ...]) -> None:
-    """A tangential quadrilateral about its incircle (radius 1 up to similarity).
-
-    Let the touch points lie at angles 0, 2i, 2(i+j), 2(i+j+k); the four half angles i, j, k, l
-    between them are acute with sum 180 degrees, a vertex is the pole of a chord of neighbouring
-    touch points, and every tangent length is a tangent.  So tan i, tan j, tan k > 0 are
-    parameters, tan l = -tan(i+j+k) > 0 the only condition, and no such quadrilateral is lost.
-    """
-    p, q, r, _s = quad
-    t = [b.param(f"tangent length at {x}", positive=True) for x in (p, q, r)]
-    x, y, z = t
-    last = (x * y * z - x - y - z) * (1 - x * y - y * z - z * x)
-    b.require(last, ">", "the tangents do not close")
-    radius = b.param("inradius", positive=True) if b.frame.keeps_scale else b.number(1)
-    zero, one = b.number(0), b.number(1)
-    touch = [Vec(one, zero)]
-    for e in t:
-        k = 1 / (e * e + 1)
-        cos, sin = (1 - e * e) * k, e * 2 * k
-        d = touch[-1]
-        touch.append(d * cos + d.turned() * sin)
-    for name, u, v in zip(quad, touch, touch[1:] + touch[:1], strict=True):
-        k = b.divide(radius, dot(u, v) + 1, "two sides parallel about a vertex")
-        b.put(name, (u + v) * k)
 
 
 def _regular(b: Builder, names: tuple[Pt, ...], cos: Element, sin: Element) -> None:

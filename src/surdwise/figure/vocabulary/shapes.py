@@ -7,6 +7,7 @@ from fractions import Fraction
 from ...sheet.tree import Pt
 from ..component import Builder
 from ..plane import Vec, dot, orientation, square
+from .placements import placed_by
 from .table import form
 
 
@@ -41,34 +42,10 @@ def not_flat(b: Builder, names: tuple[Pt, ...]) -> None:
 @form("triangle")
 def triangle(b: Builder, names: tuple[Pt, ...]) -> None:
     """Three points, not collinear."""
-    if b.frame.kind == SIDES and not b.comp.points:
-        by_sides(b, names)
+    if placed_by(b, "triangle", names):
         return
     corners(b, names)
     not_flat(b, names)
-
-
-SIDES = "sides"
-
-
-def by_sides(b: Builder, names: tuple[Pt, ...]) -> None:
-    """A free triangle by the tangent lengths of its incircle: a = y + z, b = z + x, c = x + y.
-
-    Three lengths a, b, c are the sides of a triangle exactly when x = (b + c - a)/2 and its like
-    are positive, so with x, y, z > 0 (z = 1 up to similarity) no triangle is lost.  Sides are
-    rational; the only root is 4 S = 4 sqrt(xyz(x + y + z)) (Heron).
-    """
-    p, q, r = names
-    x = b.param(f"tangent length at {p}", positive=True)
-    y = b.param(f"tangent length at {q}", positive=True)
-    z = b.param(f"tangent length at {r}", positive=True) if b.frame.keeps_scale else b.number(1)
-    side_a, side_b, side_c = y + z, z + x, x + y
-    area = b.root(x * y * z * (x + y + z))
-    zero = b.number(0)
-    b.put(p, Vec(zero, zero))
-    b.put(q, Vec(side_c, zero))
-    along = (side_b * side_b + side_c * side_c - side_a * side_a) / (side_c * 2)
-    b.put(r, Vec(along, area * 2 / side_c))
 
 
 @form("isosceles_triangle")
