@@ -40,12 +40,14 @@ def decide(
     time_limit: float = 60.0,
     progress: Callable[[str], None] = lambda text: None,
     frame: str | None = None,
+    report: Callable[[Decision], None] = lambda known: None,
 ) -> tuple[Decision, ...]:
     """Decide every claim of a sheet; `time_limit` is in seconds for each claim, `frame` one of
-    `frames_for(sheet)` or None for the cheapest."""
+    `frames_for(sheet)` or None for the cheapest; `report` is given what is proved early, for
+    callers that may have to stop the work."""
     if frame is not None and frame not in frames_for(sheet):
         raise FrameError(f"expected one of {', '.join(frames_for(sheet))} as frame, got {frame}")
-    return tuple(decide_claim(sheet, line, time_limit, progress, frame) for line in sheet.claims)
+    return tuple(decide_claim(sheet, line, time_limit, progress, frame, report) for line in sheet.claims)
 
 
 class FrameError(SurdwiseError):

@@ -79,10 +79,10 @@ def _progress() -> Callable[[str], None]:
     return show
 
 
-def _decide_all(sheet: Sheet, soft: float, frame: str | None) -> object:
+def _decide_all(sheet: Sheet, soft: float, frame: str | None, report: Callable[[object], None]) -> object:
     from .api import decide
 
-    return decide(sheet, time_limit=soft, progress=_progress(), frame=frame)
+    return decide(sheet, time_limit=soft, progress=_progress(), frame=frame, report=report)
 
 
 @app.command()
@@ -129,7 +129,7 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: 
     from dataclasses import replace
 
     from .figure.program import frames_for
-    from .limits import LimitReached, run_guarded, run_limited
+    from .limits import LimitReached, run_guarded
     from .sheet import show
     from .verdict.outcome import Decision, Verdict
 
@@ -140,14 +140,13 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: 
     for line in sheet.claims:
         one = replace(sheet, claims=(line,))
         try:
-            if seconds is None and mebibytes is None:
-                out += run_guarded(_decide_all, one, soft, frame, seconds=soft + GRACE)
-            else:
-                out += run_limited(_decide_all, one, soft, frame, seconds=soft + GRACE, mebibytes=mebibytes)
+            out += run_guarded(
+                _decide_all, one, soft, frame, seconds=soft + GRACE, mebibytes=mebibytes, reports=True
+            )
         except LimitReached as e:
             why = f"{e} ({soft:g} s)" if "time" in str(e) else str(e)
-            text = show(line.body)
-            out.append(Decision(sheet.file, sheet.title, text, Verdict.UNDECIDED, reason=why))
+            known = e.partial or Decision(sheet.file, sheet.title, show(line.body), Verdict.UNDECIDED)
+            out.append(replace(known, reason=f"{known.reason}{why}", seconds=soft))
     return out
 
 

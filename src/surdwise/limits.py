@@ -10,58 +10,110 @@ import signal
 import time
 from collections.abc import Callable
 from concurrent.futures import TimeoutError as OutOfWait
-from typing import Any
+from typing import Any, NoReturn
 
 MIB = 1 << 20
 GRACE = 0.2  # seconds between asking a worker to stop and killing it
 
 
 class LimitReached(Exception):
-    """The worker was stopped; the text says which limit was reached."""
+    """The worker was stopped; the text says which limit was reached, `partial` is the last thing
+    that it had reported, or None."""
+
+    def __init__(self, text: str, partial: Any = None) -> None:
+        super().__init__(text)
+        self.partial = partial
 
 
-def run_guarded(work: Callable[..., Any], *args: Any, seconds: float) -> Any:
-    """work(*args) in a fork of this process that is killed after `seconds`.
+def run_guarded(
+    work: Callable[..., Any], *args: Any, seconds: float, mebibytes: int | None = None, reports: bool = False
+) -> Any:
+    """work(*args) in a fork of this process that is killed after `seconds` and refused more than
+    `mebibytes` of address space beyond what it starts with.
 
-    The lighter guard of every command without limits of its own: loading the worker pool would
-    take as long as deciding a small sheet.  Raises LimitReached; errors come through unchanged.
+    With `reports` the work gets one more argument, a function that keeps a partial answer for
+    the case that it is killed.  The lighter guard of single commands: loading the worker pool
+    would take as long as deciding a small sheet.  Raises LimitReached; errors come through
+    unchanged.
     """
     ours, theirs = os.pipe()
     child = os.fork()
     if child == 0:
         os.close(ours)
-        code = 1
-        try:
-            try:
-                answer = pickle.dumps((True, work(*args)))
-            except BaseException as e:
-                answer = pickle.dumps((False, e))
-            with os.fdopen(theirs, "wb") as out:
-                out.write(answer)
-            code = 0
-        finally:
-            os._exit(code)
+        _work(theirs, work, args, mebibytes, reports)
     os.close(theirs)
-    chunks: list[bytes] = []
     end = time.monotonic() + seconds
+    partial: Any = None
     with os.fdopen(ours, "rb", buffering=0) as pipe:
         while True:
-            ready, _, _ = select.select([pipe], [], [], max(end - time.monotonic(), 0.0))
-            if not ready:
+            message = _message(pipe, end)
+            if message is None:
                 os.kill(child, signal.SIGKILL)
                 os.waitpid(child, 0)
-                raise LimitReached("the time limit was reached")
-            chunk = pipe.read(1 << 16)
-            if not chunk:
+                raise LimitReached("the time limit was reached", partial)
+            kind, answer = message
+            if kind != "partial":
                 break
-            chunks.append(chunk)
+            partial = answer
     os.waitpid(child, 0)
-    if not chunks:
-        raise LimitReached("the process that did the work died")
-    ok, answer = pickle.loads(b"".join(chunks))  # our own child's answer
-    if not ok:
+    if kind == "answer":
+        return answer
+    if kind == "error" and not isinstance(answer, MemoryError):
         raise answer
-    return answer
+    if mebibytes is None:
+        raise LimitReached("the process that did the work died", partial)
+    raise LimitReached(f"the memory limit of {mebibytes} MiB was reached", partial)
+
+
+def _work(
+    pipe: int, work: Callable[..., Any], args: tuple[Any, ...], mebibytes: int | None, reports: bool
+) -> NoReturn:
+    """The child's side: answers are pickles, each behind its length."""
+
+    def send(kind: str, what: Any) -> None:
+        data = pickle.dumps((kind, what))
+        data = len(data).to_bytes(8, "big") + data
+        while data:
+            data = data[os.write(pipe, data) :]
+
+    code = 1
+    try:
+        if mebibytes is not None:
+            _confine(mebibytes)
+        more = (lambda what: send("partial", what),) if reports else ()
+        try:
+            send("answer", work(*args, *more))
+        except BaseException as e:
+            send("error", e)
+        code = 0
+    finally:
+        os._exit(code)
+
+
+def _message(pipe: Any, end: float) -> tuple[str, Any] | None:
+    """The child's next message; ("dead", None) if it died, None when time is up."""
+    size = _bytes(pipe, 8, end)
+    if size is None or not size:
+        return size if size is None else ("dead", None)
+    data = _bytes(pipe, int.from_bytes(size, "big"), end)
+    if data is None or not data:
+        return data if data is None else ("dead", None)
+    kind, what = pickle.loads(data)  # our own child's answer
+    return kind, what
+
+
+def _bytes(pipe: Any, count: int, end: float) -> bytes | None:
+    """Exactly `count` bytes, b"" if the child is gone first, None when time is up."""
+    out = b""
+    while len(out) < count:
+        ready, _, _ = select.select([pipe], [], [], max(end - time.monotonic(), 0.0))
+        if not ready:
+            return None
+        chunk = pipe.read(count - len(out))
+        if not chunk:
+            return b""
+        out += chunk
+    return out
 
 
 def run_limited(

@@ -15,10 +15,11 @@ from ..figure.conditions import EQUATIONS, is_closed
 from ..figure.program import Program, program
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
+from .ahead import look_ahead
 from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .explain import explain
 from .frames import frames_by_cost
-from .naming import Case, statement
+from .naming import Case, links_of
 from .outcome import Decision, Link, Variant, Verdict
 from .survey import OutOfTime, Place, Survey
 from .variants import patterns, signed, terms
@@ -46,6 +47,7 @@ def decide_claim(
     time_limit: float,
     progress: Callable[[str], None] = lambda text: None,
     frame: str | None = None,
+    report: Callable[[Decision], None] = lambda known: None,
 ) -> Decision:
     """Decide one claim within a time limit in seconds; `frame` forces a frame.
 
@@ -56,6 +58,11 @@ def decide_claim(
     claim: Condition = line.body  # type: ignore[assignment]
     end = start + time_limit
     best: Decision | None = None
+
+    def tell(known: Decision) -> None:
+        if best is None or _gaps(known) < _gaps(best):
+            report(known)
+
     try:
         kinds = [frame] if frame else frames_by_cost(sheet, claim)
     except (TooLarge, TooManyCells) as e:
@@ -64,9 +71,10 @@ def decide_claim(
     for i, kind in enumerate(kinds):
         left = end - time.monotonic()
         last = i == len(kinds) - 1
-        out = _in_frame(sheet, claim, kind, left if last else left / 2, time_limit, progress)
+        out = _in_frame(sheet, claim, kind, left if last else left / 2, time_limit, progress, tell)
         if best is None or _gaps(out) < _gaps(best):
             best = out
+            report(best)
         if not _gaps(best) or end - time.monotonic() < 0.1 * time_limit:
             break
     assert best is not None
@@ -84,15 +92,18 @@ def _in_frame(
     seconds: float,
     time_limit: float,
     progress: Callable[[str], None],
+    report: Callable[[Decision], None],
 ) -> Decision:
     blank = _blank(sheet, claim)
+    case = Case(sheet, program(sheet, kind), time.monotonic() + seconds, progress, report)
     try:
-        case = Case(sheet, program(sheet, kind), time.monotonic() + seconds, progress)
         return _decided(case, claim, blank)
     except OutOfTime:
-        return replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
+        why = f"the time limit of {time_limit:g} s was reached"
     except (TooLarge, TooManyCells, Unsettled) as e:
-        return replace(blank, reason=str(e))
+        why = str(e)
+    known = case.known or blank
+    return replace(known, reason=f"{known.reason}{why}")
 
 
 def _gaps(d: Decision) -> int:
@@ -104,15 +115,18 @@ def _gaps(d: Decision) -> int:
 
 
 def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
-    parts = _links(claim)
+    parts = links_of(claim)
     equalities = [_equality(c) for c in parts]
     whats = [claim]
     if len(parts) > 1:
         whats += parts
     whats += [c for c in equalities if c is not None]
+    look_ahead(case, claim, blank)
+    if case.known is not None:
+        case.report(case.known)
     # the continuity lemma speaks of the claim alone
     plain = len(whats) == 1 and is_closed(claim)
-    found = case.survey([statement(c) for c in whats], closed=plain)
+    found = case.survey([case.statement(c) for c in whats], closed=plain)
     verdict = verdict_of(found.places, 0)
     out = replace(
         blank,
@@ -128,6 +142,8 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
         holds_at=witness(case.program, found.places, 0, True),
         fails_at=witness(case.program, found.places, 0, False),
     )
+    case.known = replace(out, reason="the verdict is proved; naming where it holds was stopped: ")
+    case.report(case.known)
     side: AlgebraicSide | None = None
     if is_equality(claim):
         assert isinstance(claim, (Comparison, Relation))
@@ -141,7 +157,8 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     late = [f"{w}: not examined" for w in sorted(case.unexamined)]
     out = replace(out, degenerate=tuple(dict.fromkeys((*out.degenerate, *late))))
     total, true = (side.total, side.true) if side is not None else (0, 0)
-    return replace(out, explanation=explain(out, total, true))
+    proofs = "".join(f" {x.words}." for x in case.lemmas)
+    return replace(out, explanation=explain(out, total, true) + proofs)
 
 
 def is_equality(c: Condition) -> bool:
@@ -166,7 +183,7 @@ def _explained(
     if out.verdict is not Verdict.HOLDS and len(parts) == 1 and isinstance(claim, Comparison):
         forms = _signed_forms(claim)
     if forms:
-        first = case.survey([statement(c) for c in forms], closed=False, shallow=True)
+        first = case.survey([case.statement(c) for c in forms], closed=False, shallow=True)
         full = max((p.dimension for p in first.places), default=0)
         top = [p for p in first.places if p.dimension == full]
         keep = [i for i in range(len(forms)) if any(p.truths[i] for p in top)]
@@ -174,7 +191,7 @@ def _explained(
         forms = [forms[i] for i in keep]
     if forms:
         whats = [*whats, *forms]
-        found = case.survey([statement(c) for c in whats], closed=False)
+        found = case.survey([case.statement(c) for c in whats], closed=False)
     n = len(whats) - len(forms)
     said_ = _where(case, whats, found, n)
     where, exact_ = [w for w, _, _ in said_], [e for _, e, _ in said_]
@@ -250,12 +267,6 @@ def _where(
             c = a.condition
             out[i] = (None if c is None else said(c), a.exact, c is not None and in_frame(c))
     return out
-
-
-def _links(claim: Condition) -> list[Condition]:
-    if not isinstance(claim, Comparison) or len(claim.ops) == 1:
-        return [claim]
-    return [Comparison((claim.items[i], claim.items[i + 1]), (op,)) for i, op in enumerate(claim.ops)]
 
 
 def _equality(c: Condition) -> Condition | None:

@@ -12,8 +12,10 @@ from ..field.real import Branch
 from ..figure.component import Component
 from ..figure.conditions import Judge, is_open, truth
 from ..figure.program import Program
-from ..sheet.tree import Condition, Relation, Sheet
+from ..sheet.tree import Comparison, Condition, Relation, Sheet
 from .candidates import Candidate, candidates
+from .lemma import Lemma
+from .outcome import Decision
 from .spot import Register, Spot, Undefined
 from .survey import OutOfTime, Place, Statement, Survey, Surveyor
 from .words import Lexicon, in_frame, name
@@ -22,22 +24,24 @@ PROOF_ROUNDS = 6
 NAMING_PLACES = 120
 
 
-def statement(c: Condition) -> Statement:
-    """A condition as something to be judged."""
-    return lambda j: truth(c, j)
-
-
-def agrees(claim: Condition, guess: Condition) -> Statement:
+def agree(claim: Statement, guess: Statement) -> Statement:
     """Whether claim and guess are true or false together (an undefined guess disagrees)."""
 
     def judge(j: Judge) -> bool:
-        t = truth(claim, j)
+        t = claim(j)
         try:
-            return truth(guess, j) == t
+            return guess(j) == t
         except Undefined:
             return False
 
     return judge
+
+
+def links_of(claim: Condition) -> list[Condition]:
+    """The links of a chain; any other claim is its own only link."""
+    if not isinstance(claim, Comparison) or len(claim.ops) == 1:
+        return [claim]
+    return [Comparison((claim.items[i], claim.items[i + 1]), (op,)) for i, op in enumerate(claim.ops)]
 
 
 @dataclass
@@ -48,8 +52,22 @@ class Case:
     program: Program
     deadline: float
     progress: Callable[[str], None]
+    report: Callable[[Decision], None] = lambda known: None
     lexicon: Lexicon | None = None
     unexamined: set[str] = field(default_factory=set)
+    lemmas: list[Lemma] = field(default_factory=list)
+    known: Decision | None = None
+
+    def statement(self, c: Condition) -> Statement:
+        """A condition as something to be judged, by a lemma where one says the same more plainly."""
+        if isinstance(c, Comparison) and len(c.ops) > 1:
+            links = [self.statement(x) for x in links_of(c)]
+            return lambda j: all(x(j) for x in links)
+        for lemma in self.lemmas:
+            plain = lemma.statement(c)
+            if plain is not None:
+                return plain
+        return lambda j: truth(c, j)
 
     def tick(self) -> None:
         """Stop when time is out."""
@@ -69,7 +87,7 @@ class Case:
         conditions += where
         return Surveyor(
             self.program,
-            [statement(c) for c in conditions],
+            [self.statement(c) for c in conditions],
             statements,
             self.deadline,
             closed=closed,
@@ -131,8 +149,9 @@ class Case:
             if not guesses:
                 continue
             keys = list(guesses)
-            pairs: list[Statement] = [agrees(whats[i], guesses[i]) for i in keys]
-            proof = self.survey([*pairs, *(statement(whats[i]) for i in keys)], closed=False)
+            claims = [self.statement(whats[i]) for i in keys]
+            pairs = [agree(c, self.statement(guesses[i])) for i, c in zip(keys, claims, strict=True)]
+            proof = self.survey([*pairs, *claims], closed=False)
             for k, i in enumerate(keys):
                 wrong = [p for p in proof.places if not p.truths[k]]
                 bad = [p for p in wrong if p.dimension == full] if i in rough else wrong
@@ -156,7 +175,7 @@ class Case:
         out = [(p, True) for p in points if not _says(guess, p)]
         if out:
             return out
-        proof = self.survey([statement(what)], closed=False, where=[guess])
+        proof = self.survey([self.statement(what)], closed=False, where=[guess])
         self.unexamined |= set(proof.not_examined)
         return [(p, False) for p in proof.places if not p.truths[0]][:30]
 

@@ -7,6 +7,7 @@ that avoids them all, every spot of the same branch settles every sign alike.
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 from fractions import Fraction
@@ -219,13 +220,33 @@ class Spot(Judge):
             self.origin = "thesis"
 
 
-class Hint(Judge):
-    """A judge that guesses: the whole figure in balls, tiny balls about zero taken for zero.
-    For proposals that are proved afterwards, never for a verdict."""
+class Lone(Spot):
+    """A spot that stands for itself and its near neighbours only: what its truth depends on is not
+    registered.  Everything it meets is proved to be off zero at the sample itself."""
 
-    def __init__(self, comp: Component, branch: Branch | NearBranch) -> None:
+    def __init__(self, comp: Component, branch: Branch) -> None:
+        super().__init__(comp, branch, Register())
+
+    def _enter(self, kind: str, e: Element) -> None:
+        """Unsettled where an element that is not identically zero vanishes at the sample."""
+        if kind in ("thin", "avoid"):
+            self.branch.sign(Element(self.comp.tower, e.num, e.den))
+
+    def admitted(self, conditions: Sequence[Callable[[Judge], bool]]) -> bool:
+        """Whether the figure itself is admitted."""
+        for r in self.comp.requires:
+            if r.op == "!=" and not r.element.is_zero():
+                self._enter("avoid", r.element)
+        return super().admitted(conditions)
+
+
+class Hint(Judge):
+    """A judge that guesses: the whole figure in approximate numbers.  For proposals that are
+    proved afterwards, never for a verdict."""
+
+    def __init__(self, comp: Component, value: Callable[[Element], Any], parameters: dict[int, Any]) -> None:
         def vec(v: Vec) -> Vec:
-            return Vec(ball_of(v.x, branch), ball_of(v.y, branch))  # type: ignore[arg-type]
+            return Vec(value(v.x), value(v.y))
 
         points = {n: vec(v) for n, v in comp.points.items()}
         curves: dict[str, Curve] = {}
@@ -233,11 +254,10 @@ class Hint(Judge):
             if isinstance(c, Straight):
                 curves[n] = Straight(vec(c.point), vec(c.direction))
             else:
-                curves[n] = Round(vec(c.centre), ball_of(c.radius2, branch), vec(c.start))  # type: ignore[arg-type]
+                curves[n] = Round(vec(c.centre), value(c.radius2), vec(c.start))
         self.comp = Component(comp.tower, {}, (), points, curves)
         self._kept: dict[object, Any] = {}
-        self.parameters = branch_parameters(branch)
-        self.parameters.update({k: ball_of(e, branch) for k, e in comp.values.items()})
+        self.parameters = {**parameters, **{k: value(e) for k, e in comp.values.items()}}
 
     def kept(self, name: object, make: Callable[[], Any]) -> Any:
         """A number that depends on no sign, computed once."""
@@ -245,32 +265,17 @@ class Hint(Judge):
             self._kept[name] = make()
         return self._kept[name]
 
-    def number(self, value: int | Fraction) -> Any:
-        """A rational constant."""
-        return number(value)
-
-    def sign(self, e: Any) -> int:
-        """Sign by one ball."""
-        s: int | None = e.sign()
-        if s is None:
-            raise Unsettled("too near zero to guess")
-        return s
-
-    weak_sign = sign
-
     def zero(self, e: Any) -> bool:
-        """Whether the ball is taken for zero."""
+        """Whether the number is taken for zero."""
         return self.sign(e) == 0
+
+    def weak_sign(self, e: Any) -> int:
+        """The same as `sign`."""
+        return self.sign(e)
 
     def absolute(self, e: Any) -> Any:
         """|e|."""
         return e * self.sign(e)
-
-    def root(self, q: Any) -> Any:
-        """Square root; Undefined for a negative number."""
-        if self.sign(q) < 0:
-            raise Undefined("a square root of a negative quantity")
-        return q.root()
 
     def divide(self, a: Any, b: Any, words: str) -> Any:
         """a/b."""
@@ -283,6 +288,52 @@ class Hint(Judge):
         if self.sign(square(a - b)) == 0:
             raise Undefined(words)
 
+
+class BallHint(Hint):
+    """Numbers are balls of some 150 digits; tiny balls about zero are taken for zero."""
+
+    def __init__(self, comp: Component, branch: Branch | NearBranch) -> None:
+        super().__init__(comp, lambda e: ball_of(e, branch), branch_parameters(branch))
+
+    def number(self, value: int | Fraction) -> Any:
+        """A rational constant."""
+        return number(value)
+
+    def sign(self, e: Any) -> int:
+        """Sign by one ball."""
+        s: int | None = e.sign()
+        if s is None:
+            raise Unsettled("too near zero to guess")
+        return s
+
+    def root(self, q: Any) -> Any:
+        """Square root; Undefined for a negative number."""
+        if self.sign(q) < 0:
+            raise Undefined("a square root of a negative quantity")
+        return q.root()
+
     def polynomial(self, p: Poly) -> Any:
         """A polynomial of the frame's parameters."""
         return polynomial(p, self.parameters)
+
+
+class FloatHint(Hint):
+    """Numbers are floats; what is below 1e-9 is taken for zero."""
+
+    def number(self, value: int | Fraction) -> Any:
+        """A rational constant."""
+        return float(value)
+
+    def sign(self, e: Any) -> int:
+        """Sign of a float."""
+        return 0 if abs(e) < 1e-9 else 1 if e > 0 else -1
+
+    def root(self, q: Any) -> Any:
+        """Square root; Undefined for a negative number."""
+        if q < -1e-9:
+            raise Undefined("a square root of a negative quantity")
+        return math.sqrt(max(q, 0.0))
+
+    def polynomial(self, p: Poly) -> Any:
+        """Not read by a search."""
+        raise KeyError(p)

@@ -18,7 +18,7 @@ from ..figure.conditions import EQUATIONS, truth
 from ..sheet.show import show
 from ..sheet.tree import And, Comparison, Condition, Not, Or, Relation
 from .candidates import Candidate, all_of, any_of, says_the_same
-from .spot import Hint, Undefined
+from .spot import BallHint, Hint, Undefined
 from .survey import Place
 
 NEGATION = 0.35
@@ -53,7 +53,7 @@ class Lexicon:
         """Truth of every candidate at a place; None where undefined or too near to guess."""
         if id(p) not in self._rows:
             with precise():
-                hint = Hint(p.comp, p.branch)
+                hint = BallHint(p.comp, p.branch)
                 self._rows[id(p)] = p, tuple(self._guess(c.condition, hint, p) for c in self.cands)
         return self._rows[id(p)][1]
 
