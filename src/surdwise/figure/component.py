@@ -52,7 +52,7 @@ class _Fork(Exception):
 class Component:
     """One component of the figure so far.
 
-    `memo`, `kept`, `eliminations`, `boxes` and `factors` keep what was found while the finished
+    `memo`, `kept`, `eliminations`, `boxes`, `factors` and `steady` keep what was found while the finished
     component is read; a component under construction has none of it, since its branches differ.
     """
 
@@ -70,6 +70,7 @@ class Component:
     eliminations: cells.Eliminations = field(default_factory=cells.Eliminations)
     boxes: dict[object, list[Any]] = field(default_factory=dict)
     factors: dict[str, dict[str, Poly]] = field(default_factory=dict)
+    steady: dict[str, frozenset[str]] = field(default_factory=dict)
 
     def ground(self) -> Tower:
         """The tower of the figure itself, without lengths that readers adjoined since."""

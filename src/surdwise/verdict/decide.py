@@ -13,9 +13,10 @@ from ..field.ring import PARAM_NAMES, TooLarge, is_constant
 from ..field.tower import Element
 from ..figure.conditions import EQUATIONS, is_closed
 from ..figure.program import Program, program
+from ..figure.vocabulary.placements import CARTESIAN
 from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
-from .ahead import look_ahead
+from .ahead import Ahead, look_ahead
 from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .explain import explain
 from .frames import frames_by_cost
@@ -63,15 +64,37 @@ def decide_claim(
         if best is None or _gaps(known) < _gaps(best):
             report(known)
 
+    def tick() -> None:
+        if time.monotonic() > end:
+            raise OutOfTime
+
+    ahead = Ahead()
+    kinds: list[str] = []
+    blank = Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
     try:
+        ahead = look_ahead(sheet, claim, blank, tick)
+        if ahead.known is not None:
+            report(ahead.known)
         kinds = [frame] if frame else frames_by_cost(sheet, claim)
+        if ahead.lemmas:
+            kinds.sort(key=lambda k: k != CARTESIAN)
+    except OutOfTime:
+        best = replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
     except (TooLarge, TooManyCells) as e:
-        kinds = []
-        best = replace(_blank(sheet, claim), reason=str(e))
+        best = replace(blank, reason=str(e))
     for i, kind in enumerate(kinds):
         left = end - time.monotonic()
         last = i == len(kinds) - 1
-        out = _in_frame(sheet, claim, kind, left if last else left / 2, time_limit, progress, tell)
+        case = Case(
+            sheet,
+            program(sheet, kind),
+            time.monotonic() + (left if last else left / 2),
+            progress,
+            tell,
+            lemmas=ahead.lemmas,
+            known=ahead.known,
+        )
+        out = _in_frame(case, claim, blank, time_limit)
         if best is None or _gaps(out) < _gaps(best):
             best = out
             report(best)
@@ -81,21 +104,7 @@ def decide_claim(
     return replace(best, seconds=round(time.monotonic() - start, 6))
 
 
-def _blank(sheet: Sheet, claim: Condition) -> Decision:
-    return Decision(sheet.file, sheet.title, show(claim), Verdict.UNDECIDED)
-
-
-def _in_frame(
-    sheet: Sheet,
-    claim: Condition,
-    kind: str,
-    seconds: float,
-    time_limit: float,
-    progress: Callable[[str], None],
-    report: Callable[[Decision], None],
-) -> Decision:
-    blank = _blank(sheet, claim)
-    case = Case(sheet, program(sheet, kind), time.monotonic() + seconds, progress, report)
+def _in_frame(case: Case, claim: Condition, blank: Decision, time_limit: float) -> Decision:
     try:
         return _decided(case, claim, blank)
     except OutOfTime:
@@ -121,9 +130,6 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     if len(parts) > 1:
         whats += parts
     whats += [c for c in equalities if c is not None]
-    look_ahead(case, claim, blank)
-    if case.known is not None:
-        case.report(case.known)
     # the continuity lemma speaks of the claim alone
     plain = len(whats) == 1 and is_closed(claim)
     found = case.survey([case.statement(c) for c in whats], closed=plain)

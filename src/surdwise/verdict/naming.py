@@ -55,7 +55,7 @@ class Case:
     report: Callable[[Decision], None] = lambda known: None
     lexicon: Lexicon | None = None
     unexamined: set[str] = field(default_factory=set)
-    lemmas: list[Lemma] = field(default_factory=list)
+    lemmas: tuple[Lemma, ...] = ()
     known: Decision | None = None
 
     def statement(self, c: Condition) -> Statement:
@@ -165,7 +165,6 @@ class Case:
                     self.unexamined |= set(proof.not_examined)
                     open_.discard(i)
         return answers
-
 
     def _wrong_at_points(
         self, what: Condition, guess: Condition, points: Sequence[Place]

@@ -15,6 +15,7 @@ from typing import Any
 
 from ..field import cells, ring, roots
 from ..field.ball import ball_of, branch_parameters, number, polynomial
+from ..field.definite import steady_factors
 from ..field.near import NearBranch
 from ..field.real import Branch, Unsettled
 from ..field.ring import Poly
@@ -24,6 +25,8 @@ from ..figure.component import READ, Component
 from ..figure.conditions import Judge
 from ..figure.plane import Curve, Round, Straight, Vec, square
 
+# what a border that keeps the sign still is: an equation may hold on it, samples keep off it
+_STEADY = {"open": "thin", "closed": "thin", "fold": "avoid", "domain": "avoid"}
 CELL = frozenset({"figure", "domain", "fold", "open", "closed"})
 
 
@@ -99,8 +102,25 @@ class Spot(Judge):
             return
         self.register.done[name] = e  # kept alive, so that its identity stays its own
         found = self._factors(e)
+        if kind in _STEADY:
+            steady = self._steady(e)
+            calm = {n: p for n, p in found.items() if n in steady}
+            found = {n: p for n, p in found.items() if n not in steady}
+            self._register(_STEADY[kind], calm)
+        self._register(kind, found)
+
+    def _register(self, kind: str, found: dict[str, Poly]) -> None:
         self.register.enter(kind, found)
         self.register.enter(f"{self.origin}:{kind}", found)
+
+    def _steady(self, e: Element) -> frozenset[str]:
+        """Borders that an element without generators touches and keeps its sign."""
+        if ring.has_gens(e.num):
+            return frozenset()
+        name = e.key()
+        if name not in self.comp.steady:
+            self.comp.steady[name] = steady_factors(e.num, e.den, self.comp.positive)
+        return self.comp.steady[name]
 
     def _factors(self, e: Element) -> dict[str, Poly]:
         """Irreducible factors of the norm and the denominator that can vanish."""
