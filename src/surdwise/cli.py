@@ -7,7 +7,7 @@ import sys
 import time
 from collections.abc import Callable
 from pathlib import Path
-from typing import Annotated
+from typing import Annotated, Any
 
 import typer
 
@@ -24,6 +24,7 @@ app = typer.Typer(
 
 BAD_SHEET = 2
 DEFAULT_SECONDS = 60.0
+QUIET = 2.0  # seconds without a word about progress
 GRACE = 0.5  # seconds that the work has to come to its own stop before it is killed
 
 Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default=False)]
@@ -63,26 +64,40 @@ def _read(path: Path) -> tuple[Sheet, ...]:
         raise typer.Exit(BAD_SHEET) from None
 
 
-def _progress() -> Callable[[str], None]:
-    """Progress on a terminal for work over two seconds; silence in a pipe."""
-    if not sys.stderr.isatty():
-        return lambda text: None
-    start = last = time.monotonic()
+class _Watch:
+    """Progress of work over two seconds, on a terminal; silence in a pipe."""
 
-    def show(text: str) -> None:
-        nonlocal last
-        now = time.monotonic()
-        if now - start > 2 and now - last > 0.2:
-            last = now
-            print(f"\r\x1b[2m{now - start:5.1f} s  {text}\x1b[0m\x1b[K", end="", file=sys.stderr, flush=True)
+    def __init__(self) -> None:
+        self.start = time.monotonic()
+        self.status: Any = None
 
-    return show
+    def __call__(self, text: str) -> None:
+        """Show a text with the seconds so far."""
+        seconds = time.monotonic() - self.start
+        if self.status is None and seconds > QUIET:
+            from rich.console import Console
+
+            self.status = Console(stderr=True).status("")
+            self.status.start()
+        if self.status is not None:
+            self.status.update(f"{seconds:.0f} s, {text}")
+
+    def stop(self) -> None:
+        """Leave the terminal as it was."""
+        if self.status is not None:
+            self.status.stop()
 
 
-def _decide_all(sheet: Sheet, soft: float, frame: str | None, report: Callable[[object], None]) -> object:
+def _decide_all(sheet: Sheet, soft: float, frame: str | None, tell: Callable[[str, object], None]) -> object:
     from .api import decide
 
-    return decide(sheet, time_limit=soft, progress=_progress(), frame=frame, report=report)
+    return decide(
+        sheet,
+        time_limit=soft,
+        progress=lambda text: tell("progress", text),
+        frame=frame,
+        report=lambda known: tell("partial", known),
+    )
 
 
 @app.command()
@@ -105,8 +120,6 @@ def decide(
     for path in sheets:
         for sheet in _read(path):
             decisions = _decided(sheet, time_limit, memory_limit, frame)
-            if sys.stderr.isatty():
-                print("\r\x1b[K", end="", file=sys.stderr)
             done += decisions
             if repair is not None:
                 from .api import repair as mend
@@ -139,14 +152,23 @@ def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: 
     out = []
     for line in sheet.claims:
         one = replace(sheet, claims=(line,))
+        watch = _Watch()
         try:
             out += run_guarded(
-                _decide_all, one, soft, frame, seconds=soft + GRACE, mebibytes=mebibytes, reports=True
+                _decide_all,
+                one,
+                soft,
+                frame,
+                seconds=soft + GRACE,
+                mebibytes=mebibytes,
+                progress=watch if sys.stderr.isatty() else None,
             )
         except LimitReached as e:
             why = f"{e} ({soft:g} s)" if "time" in str(e) else str(e)
             known = e.partial or Decision(sheet.file, sheet.title, show(line.body), Verdict.UNDECIDED)
             out.append(replace(known, reason=f"{known.reason}{why}", seconds=soft))
+        finally:
+            watch.stop()
     return out
 
 

@@ -16,6 +16,7 @@ def decision_object(d: Decision) -> dict[str, Any]:
         "verdict": d.verdict.value,
         "condition": d.condition,
         "equality": d.equality,
+        "sharp": d.sharp,
         "degenerate": list(d.degenerate),
         "algebraic": d.algebraic,
         "components": [

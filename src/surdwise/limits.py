@@ -13,6 +13,7 @@ from concurrent.futures import TimeoutError as OutOfWait
 from typing import Any, NoReturn
 
 MIB = 1 << 20
+PAUSE = 0.2  # seconds between two texts of progress
 GRACE = 0.2  # seconds between asking a worker to stop and killing it
 
 
@@ -26,13 +27,18 @@ class LimitReached(Exception):
 
 
 def run_guarded(
-    work: Callable[..., Any], *args: Any, seconds: float, mebibytes: int | None = None, reports: bool = False
+    work: Callable[..., Any],
+    *args: Any,
+    seconds: float,
+    mebibytes: int | None = None,
+    progress: Callable[[str], None] | None = None,
 ) -> Any:
     """work(*args) in a fork of this process that is killed after `seconds` and refused more than
     `mebibytes` of address space beyond what it starts with.
 
-    With `reports` the work gets one more argument, a function that keeps a partial answer for
-    the case that it is killed.  The lighter guard of single commands: loading the worker pool
+    The work gets one more argument, a function `tell(kind, what)`: kind "partial" keeps an answer for
+    the case that the work is killed, kind "progress" hands a text to `progress` in this process
+    (never more than a few times a second).  The lighter guard of single commands: loading the worker pool
     would take as long as deciding a small sheet.  Raises LimitReached; errors come through
     unchanged.
     """
@@ -40,21 +46,31 @@ def run_guarded(
     child = os.fork()
     if child == 0:
         os.close(ours)
-        _work(theirs, work, args, mebibytes, reports)
+        _work(theirs, work, args, mebibytes, progress is not None)
     os.close(theirs)
     end = time.monotonic() + seconds
     partial: Any = None
+    said = "working"
+
+    def idle() -> None:
+        if progress is not None:
+            progress(said)
+
     with os.fdopen(ours, "rb", buffering=0) as pipe:
         while True:
-            message = _message(pipe, end)
+            message = _message(pipe, end, idle)
             if message is None:
                 os.kill(child, signal.SIGKILL)
                 os.waitpid(child, 0)
                 raise LimitReached("the time limit was reached", partial)
             kind, answer = message
-            if kind != "partial":
+            if kind == "progress":
+                said = answer
+                idle()
+            elif kind == "partial":
+                partial = answer
+            else:
                 break
-            partial = answer
     os.waitpid(child, 0)
     if kind == "answer":
         return answer
@@ -66,7 +82,7 @@ def run_guarded(
 
 
 def _work(
-    pipe: int, work: Callable[..., Any], args: tuple[Any, ...], mebibytes: int | None, reports: bool
+    pipe: int, work: Callable[..., Any], args: tuple[Any, ...], mebibytes: int | None, watched: bool
 ) -> NoReturn:
     """The child's side: answers are pickles, each behind its length."""
 
@@ -76,13 +92,21 @@ def _work(
         while data:
             data = data[os.write(pipe, data) :]
 
+    last = 0.0
+
+    def tell(kind: str, what: Any) -> None:
+        nonlocal last
+        now = time.monotonic()
+        if kind != "progress" or (watched and now - last > PAUSE):
+            last = now
+            send(kind, what)
+
     code = 1
     try:
         if mebibytes is not None:
             _confine(mebibytes)
-        more = (lambda what: send("partial", what),) if reports else ()
         try:
-            send("answer", work(*args, *more))
+            send("answer", work(*args, tell))
         except BaseException as e:
             send("error", e)
         code = 0
@@ -90,25 +114,30 @@ def _work(
         os._exit(code)
 
 
-def _message(pipe: Any, end: float) -> tuple[str, Any] | None:
+def _message(pipe: Any, end: float, idle: Callable[[], None]) -> tuple[str, Any] | None:
     """The child's next message; ("dead", None) if it died, None when time is up."""
-    size = _bytes(pipe, 8, end)
+    size = _bytes(pipe, 8, end, idle)
     if size is None or not size:
         return size if size is None else ("dead", None)
-    data = _bytes(pipe, int.from_bytes(size, "big"), end)
+    data = _bytes(pipe, int.from_bytes(size, "big"), end, idle)
     if data is None or not data:
         return data if data is None else ("dead", None)
     kind, what = pickle.loads(data)  # our own child's answer
     return kind, what
 
 
-def _bytes(pipe: Any, count: int, end: float) -> bytes | None:
-    """Exactly `count` bytes, b"" if the child is gone first, None when time is up."""
+def _bytes(pipe: Any, count: int, end: float, idle: Callable[[], None]) -> bytes | None:
+    """Exactly `count` bytes, b"" if the child is gone first, None when time is up; `idle` is
+    called while waiting."""
     out = b""
     while len(out) < count:
-        ready, _, _ = select.select([pipe], [], [], max(end - time.monotonic(), 0.0))
+        left = end - time.monotonic()
+        ready, _, _ = select.select([pipe], [], [], max(min(left, 2 * PAUSE), 0.0))
         if not ready:
-            return None
+            if left <= 0:
+                return None
+            idle()
+            continue
         chunk = pipe.read(count - len(out))
         if not chunk:
             return b""

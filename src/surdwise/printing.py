@@ -37,7 +37,9 @@ def decision_text(d: Decision, colour: bool) -> str:
     if d.verdict is Verdict.FAILS:
         row("holds", _only(d.condition))
     if d.equality is not None:
-        row("equality", d.equality if d.equality in ("never", "always") else f"exactly when {d.equality}")
+        where = d.equality if d.equality in ("never", "always") else f"exactly when {d.equality}"
+        limit = {None: "", "no": "; not sharp in the limit"}.get(d.sharp, f"; sharp in the limit, {d.sharp}")
+        row("equality", where + limit)
     if d.reason:
         row("reason", d.reason)
     for x in d.links:

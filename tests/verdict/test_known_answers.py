@@ -227,3 +227,12 @@ def test_never_is_not_said_of_what_was_not_examined() -> None:
     (d,) = decide(sheet, frame="cartesian", time_limit=30)
     assert d.verdict in (Verdict.FAILS, Verdict.UNDECIDED)
     assert d.condition != "never"
+
+
+def test_equations_of_a_frame_that_a_missed_position_leaves() -> None:
+    """B may fall on A here, and then C takes B's place: an equation for C's old parameters was once
+    carried along and broke the decomposition."""
+    text = "given point A\ngiven point B\ngiven point C\ngiven A, B, C collinear\nclaim |AB| <= |AC| + |CB|\n"
+    (sheet,) = read(text)
+    (d,) = decide(sheet)
+    assert d.verdict is Verdict.HOLDS

@@ -50,7 +50,7 @@ class _Fork(Exception):
 
 @dataclass
 class Component:
-    """One component of the figure so far.
+    """One component of the figure so far; `asked` are the parameters that its steps used.
 
     `memo`, `kept`, `eliminations`, `boxes`, `factors` and `steady` keep what was found while the finished
     component is read; a component under construction has none of it, since its branches differ.
@@ -65,6 +65,7 @@ class Component:
     guards: tuple[Guard, ...] = ()
     positive: frozenset[int] = frozenset()
     folded: frozenset[int] = frozenset()
+    asked: frozenset[int] = frozenset()
     memo: dict[str, Element] = field(default_factory=dict)
     kept: dict[object, Element] = field(default_factory=dict)
     eliminations: cells.Eliminations = field(default_factory=cells.Eliminations)
@@ -89,6 +90,7 @@ class Component:
             self.guards,
             self.positive,
             self.folded,
+            self.asked,
         )
 
 
@@ -143,6 +145,7 @@ class Builder(Reader):
         [0, oo), the point zero being examined as a stratum of its own."""
         k = self.frame.slot(self.step, self._asked, label)
         self._asked += 1
+        self.comp.asked |= {k}
         (self.frame.halved if positive or folded else self.frame.whole).add(k)
         self.frame.halved -= self.frame.whole
         if k in self.comp.values:

@@ -66,6 +66,7 @@ class Program:
         tick: Callable[[], None],
     ) -> Run:
         out = Run()
+        bound = {k for p in eqs for k in ring.params_in(p)}
         for base in solve(eqs):
             tick()
             comp = self._ground(base, excluded)
@@ -90,6 +91,11 @@ class Program:
                             out.strata.update({ring.key(ring.param(k)): ring.param(k) for k in b.comp.folded})
                 alive = nxt
             for c in alive:
+                if not bound <= c.asked:
+                    # at a missed position a later point takes the frame's place and its parameters are
+                    # not used: equations between them say nothing here, and the position is a stratum
+                    # without them
+                    continue
                 out.components.append(c)
                 out.borders.append({**lead_borders, **figure_borders(c)})
         return out

@@ -20,6 +20,7 @@ from .ahead import Ahead, look_ahead
 from .algebraic import AlgebraicSide, algebraic_side, dominant
 from .explain import explain
 from .frames import frames_by_cost
+from .limit import sharpness
 from .naming import Case, links_of
 from .outcome import Decision, Link, Variant, Verdict
 from .survey import OutOfTime, Place, Survey
@@ -158,6 +159,8 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     try:
         case.deadline = min(case.deadline, time.monotonic() + NAMING_SECONDS)
         out = _explained(case, whats, parts, found, out, side)
+        if out.equality == "never" and out.verdict is Verdict.HOLDS and isinstance(claim, Comparison):
+            out = replace(out, sharp=sharpness(case, claim))
     except OutOfTime:
         out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")
     late = [f"{w}: not examined" for w in sorted(case.unexamined)]

@@ -95,3 +95,4 @@ class Decision:
     reason: str = ""
     explanation: str = ""
     in_frame: bool = False
+    sharp: str | None = None
