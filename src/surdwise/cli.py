@@ -7,12 +7,15 @@ import sys
 import time
 from collections.abc import Callable
 from pathlib import Path
-from typing import Annotated, Any
+from typing import TYPE_CHECKING, Annotated, Any
 
 import typer
 
 from . import __version__
 from .sheet import Sheet, SurdwiseError, read_file
+
+if TYPE_CHECKING:
+    from .verdict.outcome import Decision
 
 app = typer.Typer(
     name="surdwise",
@@ -119,7 +122,7 @@ def decide(
     mended = []
     for path in sheets:
         for sheet in _read(path):
-            decisions = _decided(sheet, time_limit, memory_limit, frame)
+            decisions = decided(sheet, time_limit, memory_limit, frame)
             done += decisions
             if repair is not None:
                 from .api import repair as mend
@@ -137,7 +140,9 @@ def decide(
     raise typer.Exit(worst([d.verdict for d in done]))
 
 
-def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: str | None) -> list:  # type: ignore[type-arg]
+def decided(
+    sheet: Sheet, seconds: float | None = None, mebibytes: int | None = None, frame: str | None = None
+) -> list[Decision]:
     """Decisions of one sheet, each claim in a process that is killed when its time is up."""
     from dataclasses import replace
 
@@ -200,7 +205,7 @@ def rewrite(
     script = to in ("sympy", "singular")
     mark = {"sympy": "# ", "singular": "// ", "latex": "% ", "text": ""}[to]
     for s in _read(sheet):
-        decided = _decided(s, None, None, None) if form is None and to == "text" else []
+        decided = decided(s) if form is None and to == "text" else []
         for i, r in enumerate(work(s, forms)):
             if decided:
                 r = replace(r, statuses=decided[i].algebraic, variants=decided[i].variants)

@@ -1010,4 +1010,58 @@ claim |XB| = 0
 claim |YB| = 0
 claim |XY| = 0
 """,
+    # Euclid I.20 and I.21, Bottema et al. chapters 12 and 15: sums of distances
+    """
+title point inside sums
+given triangle ABC
+given P inside triangle ABC
+claim |PA| + |PB| < |CA| + |CB|
+claim |PA| + |PB| + |PC| < perimeter(ABC)
+claim |PA| + |PB| + |PC| > perimeter(ABC)/2
+claim |PA| + |PB| < |CA|
+""",
+    """
+title convex diagonals
+given quadrilateral ABCD
+provided ABCD convex
+claim |AC| + |BD| > |AB| + |CD|
+claim |AC| + |BD| < |AB| + |BC| + |CD| + |DA|
+claim |AC| > |AB|
+""",
+    """
+title broken line of four
+given points A, B, C, D
+claim |AD| <= |AB| + |BC| + |CD|
+claim |AD| < |AB| + |BC| + |CD|
+""",
+    # Ptolemy's inequality; the area by the diagonals
+    """
+title quadrilateral products
+given quadrilateral ABCD
+claim |AC|*|BD| < |AB|*|CD| + |BC|*|DA|
+claim 2area(ABCD) <= |AC|*|BD|
+""",
+    # half-angle and incircle frames
+    """
+title half angles
+given cyclic quadrilateral ABCD
+claim |AC| + |BD| > |AB| + |CD|
+claim 4area(ABCD)^2 <= (|AB|*|CD| + |BC|*|DA|)^2
+""",
+    """
+title circle through a triangle
+given triangle ABC
+given P on circle ABC
+claim |PA| <= |PB| + |PC|
+claim |PA|*|BC| <= |PB|*|CA| + |PC|*|AB|
+""",
+    """
+title reaches
+given point A
+given point B
+given point C
+given A, B, C collinear
+claim |AB| <= |AC| + |CB|
+claim |AB| = |AC| + |CB|
+""",
 )

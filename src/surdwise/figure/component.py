@@ -9,7 +9,7 @@ kills the component and reports the strata of parameter space where it can hold.
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass, field
 from typing import Any
 
@@ -257,17 +257,21 @@ class Builder(Reader):
             return
         self.comp.points[ref.name] = v
 
-    def free_point(self, ref: Pt, distinct: bool, off_line: bool = False) -> None:
-        """Place a free point by the frame.  `distinct`: it differs from earlier points by
-        hypothesis; `off_line`: it lies off the line of the first two by hypothesis."""
+    def free_point(self, ref: Pt, shape: Sequence[Pt] = (), off_line: bool = False) -> None:
+        """Place a free point by the frame.
+
+        It differs by hypothesis from the points of `shape` (its own shape's other vertices), and
+        with `off_line` it is on no line through two of them; it may fall on any other point and line.
+        """
         c = self.comp
         zero, one = self.number(0), self.number(1)
         origin = Vec(zero, zero)
         if not c.points:
             c.points[ref.name] = origin
             return
+        mates = [c.points[q.name] for q in shape if q.name != ref.name and q.name in c.points]
         if all(square(v).is_zero() for v in c.points.values()):
-            if not distinct and self.at_missed_chart():
+            if not mates and self.at_missed_chart():
                 c.points[ref.name] = origin
                 return
             if self.frame.keeps_scale:
@@ -276,7 +280,8 @@ class Builder(Reader):
             return
         x = self.param(f"x of {ref.name}")
         if all(v.y.is_zero() for v in c.points.values()):
-            y = self.param(f"y of {ref.name}", positive=off_line, folded=not off_line)
+            off = off_line and any(not (v.x - mates[0].x).is_zero() for v in mates[1:])
+            y = self.param(f"y of {ref.name}", positive=off, folded=not off)
         else:
             y = self.param(f"y of {ref.name}")
         c.points[ref.name] = Vec(x, y)

@@ -76,8 +76,8 @@ def _incidences(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candi
         yield Candidate(Relation("concyclic", (quad,)), 2.2)
         a, b, c, d = quad
         for one, two in (((a, b), (c, d)), ((a, c), (b, d)), ((a, d), (b, c))):
-            yield Candidate(Relation("perpendicular_lines", (Through(one), Through(two))), 1.8)
-            yield Candidate(Relation("parallel_lines", (Through(one), Through(two))), 1.8)
+            yield Candidate(Relation("perpendicular_lines", (Through(one), Through(two))), 2.3)
+            yield Candidate(Relation("parallel_lines", (Through(one), Through(two))), 2.3)
 
 
 def says_the_same(c: Condition, claim: Condition) -> bool:

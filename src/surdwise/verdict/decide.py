@@ -159,7 +159,9 @@ def _decided(case: Case, claim: Condition, blank: Decision) -> Decision:
     try:
         case.deadline = min(case.deadline, time.monotonic() + NAMING_SECONDS)
         out = _explained(case, whats, parts, found, out, side)
-        if out.equality == "never" and out.verdict is Verdict.HOLDS and isinstance(claim, Comparison):
+        plane = max(p.dimension for p in found.places) <= 2
+        if out.equality == "never" and out.verdict is Verdict.HOLDS and plane:
+            assert isinstance(claim, Comparison)
             out = replace(out, sharp=sharpness(case, claim))
     except OutOfTime:
         out = replace(out, reason="the verdict is proved; naming where it holds ran out of time")

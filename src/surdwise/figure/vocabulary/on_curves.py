@@ -108,7 +108,7 @@ def on_angle_bisector(b: Builder, p: Pt, triple: tuple[Pt, ...]) -> None:
 def inside_triangle(b: Builder, p: Pt, tri: tuple[Pt, ...]) -> None:
     """Strictly inside."""
     if not b.has(p.name):
-        b.free_point(p, distinct=True)
+        b.free_point(p)
     u, v, w = (b.at(x) for x in tri)
     at = b.at(p)
     whole = orientation(u, v, w)

@@ -23,7 +23,7 @@ from .table import form
 def _ensure(b: Builder, names: Sequence[Pt], off_line: bool = True) -> None:
     for p in names:
         if not b.has(p.name):
-            b.free_point(p, distinct=True, off_line=off_line)
+            b.free_point(p, names, off_line)
 
 
 def _differ(b: Builder, p: Pt, q: Pt) -> None:

@@ -16,7 +16,7 @@ def points(b: Builder, names: tuple[Pt, ...]) -> None:
     """Free points; those of one line are distinct."""
     placed: list[Pt] = []
     for p in names:
-        b.free_point(p, distinct=bool(placed))
+        b.free_point(p, placed)
         for q in placed:
             b.require(square(b.at(p) - b.at(q)), "!=", f"{p} = {q}")
         placed.append(p)
@@ -31,7 +31,7 @@ def corners(b: Builder, names: tuple[Pt, ...]) -> None:
     """Place the missing vertices of a triangle freely."""
     for p in names:
         if not b.has(p.name):
-            b.free_point(p, distinct=True, off_line=True)
+            b.free_point(p, names, off_line=True)
 
 
 def not_flat(b: Builder, names: tuple[Pt, ...]) -> None:
@@ -56,7 +56,7 @@ def isosceles_triangle(b: Builder, names: tuple[Pt, ...], apex: Pt) -> None:
     if apex.name in new:
         for p in base:
             if p.name in new:
-                b.free_point(p, distinct=True, off_line=True)
+                b.free_point(p, names, off_line=True)
         u, v = b.at(base[0]), b.at(base[1])
         first = len(b.comp.points) == 2 and new == {x.name for x in names}
         t = b.param(f"height of {apex}", positive=first)
@@ -91,14 +91,14 @@ def right_triangle(b: Builder, names: tuple[Pt, ...], corner: Pt) -> None:
     new = {p.name for p in missing(b, names)}
     first = not b.comp.points
     if corner.name in new and len(new) > 1:
-        b.free_point(corner, distinct=True, off_line=True)
+        b.free_point(corner, names, off_line=True)
         new.discard(corner.name)
     if corner.name in new:
         p, q = b.at(legs[0]), b.at(legs[1])
         swing(b, corner, (p + q) / 2, p)
     elif new:
         if len(new) == 2:
-            b.free_point(legs[0], distinct=True, off_line=True)
+            b.free_point(legs[0], names, off_line=True)
             new.discard(legs[0].name)
         last = next(p for p in legs if p.name in new)
         other = next(p for p in legs if p.name != last.name)
@@ -119,7 +119,7 @@ def equilateral_triangle(b: Builder, names: tuple[Pt, ...]) -> None:
     order = sorted(names, key=lambda p: p.name in new)
     for p in order[:2]:
         if p.name in new:
-            b.free_point(p, distinct=True)
+            b.free_point(p, names)
     b.require(square(b.at(order[0]) - b.at(order[1])), "!=", f"{order[0]} = {order[1]}")
     side = 1 if first else 0
     b.put(order[2], apex_on(b, b.at(order[0]), b.at(order[1]), side))
