@@ -236,3 +236,35 @@ def test_equations_of_a_frame_that_a_missed_position_leaves() -> None:
     (sheet,) = read(text)
     (d,) = decide(sheet)
     assert d.verdict is Verdict.HOLDS
+
+
+SHAPES = [
+    "square ABCD",
+    "rectangle ABCD",
+    "rhombus ABCD",
+    "parallelogram ABCD",
+    "kite ABCD",
+    "trapezium ABCD",
+    "cyclic quadrilateral ABCD",
+    "quadrilateral ABCD",
+    "triangle ABC",
+    "isosceles triangle ABC with apex A",
+    "right triangle ABC with right angle at A",
+    "equilateral triangle ABC",
+    "regular hexagon ABCDEF",
+]
+
+
+@pytest.mark.parametrize("shape", SHAPES)
+def test_a_shape_may_meet_a_point_that_is_placed_before_it(shape: str) -> None:
+    """`|PA| > 0` was once said to hold: vertices were kept off every earlier point and line."""
+    (sheet,) = read(f"given point P\ngiven {shape}\nclaim |PA| > 0\nclaim not A, B, P collinear\n")
+    first, second = decide(sheet, time_limit=20)
+    assert first.verdict is Verdict.CONDITIONAL
+    assert second.verdict is Verdict.CONDITIONAL
+    assert first.equality == "not A, P distinct"
+
+
+def test_a_point_before_a_shape_may_be_its_vertex() -> None:
+    (sheet,) = read("given point P\ngiven square ABCD\nprovided not P, A distinct\nclaim |PB| = |AB|\n")
+    assert decide(sheet)[0].verdict is Verdict.HOLDS

@@ -20,6 +20,7 @@ from ..sheet.tree import Pt, Through
 from .plane import Curve, Round, Straight, Vec, square
 from .reader import Reader
 
+CHARTS = 16  # more than any step has missed positions
 READ = "length"  # label of square roots adjoined by readers of a finished component
 
 
@@ -136,7 +137,7 @@ class Builder(Reader):
         self._asked = 0
         self.missed = missed
         self.strata: dict[str, Poly] = {}
-        self.has_chart = False
+        self.charts: list[int] = []
 
     # ------------------------------------------------------------------ numbers
 
@@ -295,9 +296,11 @@ class Builder(Reader):
         return self.line(Through(pair))
 
     def at_missed_chart(self) -> bool:
-        """Whether this run takes the one position that the step's parametrisation leaves out."""
-        self.has_chart = True
-        return self.step in self.missed
+        """Whether this run takes the one position that a parametrisation leaves out.  A step may have
+        several of them, each with a number of its own."""
+        chart = self.step * CHARTS + len(self.charts)
+        self.charts.append(chart)
+        return chart in self.missed
 
     def differ(self, a: Vec, b: Vec, words: str) -> None:
         """Demand that two points differ (a line through them is meant)."""

@@ -82,8 +82,7 @@ class Program:
                 for c in alive:
                     for b, why in outcomes(c, self.frame, step, missed, _action(line)):
                         out.strata.update(b.strata)
-                        if b.has_chart:
-                            out.charts.add(step)
+                        out.charts.update(b.charts)
                         if why is None:
                             nxt.append(b.comp)
                         else:

@@ -174,7 +174,7 @@ def thesis(claim: Comparison, points: list[str], keeps_scale: bool) -> Thesis:
     frame = Frame(keeps_scale)
     b = Builder(comp, frame, 0, (), frozenset())
     for n in points:
-        b.free_point(Pt(n), distinct=True)
+        b.free_point(Pt(n), [Pt(m) for m in points])
     r = Formal(b.comp)
     left, right = (cast(Ratio, value(q, r)) for q in claim.items)
     t = r.comp.tower

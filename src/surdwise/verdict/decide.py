@@ -81,7 +81,7 @@ def decide_claim(
             kinds.sort(key=lambda k: k != CARTESIAN)
     except OutOfTime:
         best = replace(blank, reason=f"the time limit of {time_limit:g} s was reached")
-    except (TooLarge, TooManyCells) as e:
+    except (TooLarge, TooManyCells, Unsettled) as e:
         best = replace(blank, reason=str(e))
     for i, kind in enumerate(kinds):
         left = end - time.monotonic()

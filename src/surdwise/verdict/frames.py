@@ -5,7 +5,6 @@ from __future__ import annotations
 from contextlib import suppress
 from itertools import islice
 
-from ..field import cells, ring
 from ..field.real import Unsettled, branches
 from ..field.tower import Element
 from ..figure.component import Component
@@ -13,8 +12,10 @@ from ..figure.conditions import truth
 from ..figure.program import frames_for, program
 from ..figure.vocabulary.placements import HALF_ANGLES
 from ..sheet.tree import Condition, Sheet
+from .samples import likely_samples
 from .spot import Register, Spot, Undefined
 
+SAMPLES = 200
 NO_FIGURE = (1 << 30, 0)
 # tangents of quarter angles cost in the projection what they save in roots: half-angle degrees count
 # this much more (least total time over the triangle inequalities of the tests and bench/)
@@ -52,29 +53,22 @@ def _cost(sheet: Sheet, claim: Condition, kind: str) -> tuple[int, int]:
     worst = (0, 0)
     for comp in run.components[:2]:
         trial = _trial(comp)
-        if trial is not None:
-            with suppress(Unsettled, Undefined):
-                truth(claim, trial)
-            worst = max(worst, (trial.worst, comp.tower.degree))
+        if trial is None:
+            return NO_FIGURE
+        with suppress(Unsettled, Undefined):
+            truth(claim, trial)
+        worst = max(worst, (trial.worst, comp.tower.degree))
     return worst[0] * WEIGHT.get(kind, 1), worst[1]
 
 
 def _trial(comp: Component) -> Trial | None:
-    """A reader at some admitted figure."""
-    asked = [r.element.num for r in comp.requires if not ring.has_gens(r.element.num)]
-    for sample in islice(cells.open_cells(asked, list(comp.free), comp.positive, _spoilers(comp)), 30):
-        for branch in branches(comp.ground(), sample)[:1]:
-            trial = Trial(comp, branch)
-            with suppress(Unsettled):
+    """A reader at some admitted figure without accidental symmetry: parameters all different."""
+    plain = (s for s in likely_samples(comp) if len(set(s.values())) == len(s) and 0 not in s.values())
+    for sample in islice(plain, SAMPLES):
+        with suppress(Unsettled):
+            for branch in branches(comp.ground(), sample)[:1]:
+                trial = Trial(comp, branch)
                 if trial.admitted([]):
                     trial.worst = 0
                     return trial
     return None
-
-
-def _spoilers(comp: Component) -> list[ring.Poly]:
-    """Differences of parameters: a sample that avoids them has no accidental symmetry."""
-    free = list(comp.free)
-    return [ring.param(a) - ring.param(b) for a in free for b in free if a < b] + [
-        ring.param(a) for a in free
-    ]

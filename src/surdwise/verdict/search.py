@@ -7,10 +7,9 @@ rational sample at which every sign was proved.
 
 from __future__ import annotations
 
-import itertools
 import math
 import random
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 from fractions import Fraction
 
@@ -21,11 +20,10 @@ from ..figure.component import Component
 from ..figure.conditions import truth
 from ..figure.quantities import value
 from ..sheet.tree import Comparison, Condition
+from .samples import small_samples
 from .spot import FloatHint, Lone, Undefined
 from .survey import Place
 
-SMALL = [Fraction(s) for s in ("1", "2", "1/2", "3", "3/2", "1/3", "2/3", "4", "5/2", "1/4", "3/4", "5")]
-GRID = 1500
 STARTS = 12
 STEPS = 60  # evaluations for each parameter and start
 DENOMINATORS = (1, 2, 3, 4, 5, 6, 8, 10, 12, 16, 24, 32, 64, 128, 1024, 10**5)
@@ -65,11 +63,12 @@ class Search:
     def _component(self, comp: Component) -> None:
         sheet = _Sketched(comp, self.conditions, self.claim)
         best: list[tuple[float, tuple[float, ...]]] = []
-        for sample in _small(comp):
+        for sample in small_samples(comp):
             self.tick()
-            seen = sheet.margins({k: float(x) for k, x in sample.items()})
+            values = {k: int(x.p) / int(x.q) for k, x in sample.items()}
+            seen = sheet.margins(values)
             for t, m in seen:
-                best.append((m, tuple(float(sample[k]) for k in comp.free)))
+                best.append((m, tuple(values[k] for k in comp.free)))
                 if self.found.lacks(t):
                     self._confirm(comp, sample)
             if not self.found.lacks(True) and not self.found.lacks(False):
@@ -106,15 +105,14 @@ class Search:
                     if any(x <= 0 for k, x in sample.items() if k in comp.positive):
                         continue
                     if any(t == wanted for t, _ in sheet.margins({k: float(x) for k, x in sample.items()})):
-                        self._confirm(comp, sample)
+                        self._confirm(comp, {k: rational(x) for k, x in sample.items()})
                         if not self.found.lacks(wanted):
                             return
 
-    def _confirm(self, comp: Component, sample: dict[int, Fraction]) -> None:
+    def _confirm(self, comp: Component, sample: dict[int, Rational]) -> None:
         """Judge a sample exactly, on every real branch."""
-        exact: dict[int, Rational] = {k: rational(x) for k, x in sample.items()}
         try:
-            for branch in branches(comp.ground(), exact):
+            for branch in branches(comp.ground(), sample):
                 spot = Lone(comp, branch)
                 if not spot.admitted([lambda j, c=c: truth(c, j) for c in self.conditions]):  # type: ignore[misc]
                     continue
@@ -178,28 +176,6 @@ class _Sketched:
         size = abs(a) + abs(b)
         margin = (a - b) / size if size else 0.0
         return None if math.isnan(margin) else (t, margin)
-
-
-def _small(comp: Component) -> Iterator[dict[int, Fraction]]:
-    """Samples of small parameters, the smallest first; all different, to keep off symmetric
-    figures as long as possible."""
-    free = list(comp.free)
-    signed = [x for s in SMALL for x in (s, -s)]
-    choices = [SMALL if k in comp.positive else [Fraction(0), *signed] for k in free]
-    n = len(free)
-    if n == 0:
-        yield {}
-        return
-    reach = 1
-    while reach**n < GRID and reach < 12:
-        reach += 1
-    lists = [c[:reach] for c in choices]
-    ranked = sorted(itertools.product(*(range(len(c)) for c in lists)), key=lambda t: (sum(t), max(t)))
-    for t in ranked[:GRID]:
-        yield {k: c[i] for k, c, i in zip(free, lists, t, strict=True)}
-    chance = random.Random(SEED)
-    for _ in range(GRID - len(ranked)):
-        yield {k: chance.choice(c) for k, c in zip(free, choices, strict=True)}
 
 
 def _anything(chance: random.Random, positive: bool) -> float:

@@ -62,6 +62,12 @@ class Register:
         """How many bounding polynomials are known."""
         return sum(1 for n in self.polys if self.kinds[n] & CELL)
 
+    def read_by(self, origin: str) -> bool:
+        """Whether anything was read for this origin (samples' own bans aside)."""
+        return any(
+            k.startswith(f"{origin}:") and k != f"{origin}:avoid" for ks in self.kinds.values() for k in ks
+        )
+
     def of(self, kinds: Sequence[str]) -> dict[str, Poly]:
         """Polynomials with one of the kinds."""
         return {n: p for n, p in self.polys.items() if self.kinds[n] & set(kinds)}

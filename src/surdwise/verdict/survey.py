@@ -11,6 +11,7 @@ from __future__ import annotations
 import time
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
+from itertools import islice
 
 from ..field import cells, ring
 from ..field.near import NearBranch
@@ -20,9 +21,12 @@ from ..figure.component import Component
 from ..figure.conditions import Judge
 from ..figure.program import Program, Run, orientations, special_places
 from .lift import heavy, lift
+from .samples import likely_samples
 from .spot import Register, Spot, Undefined
 
 EXACT_SIZE = 40
+MANY = 3  # parameters from which on cells are avoided where they can be
+SAMPLES = 300
 
 Statement = Callable[[Judge], bool]
 
@@ -87,8 +91,16 @@ class Surveyor:
     # ------------------------------------------------------------------ strata
 
     def _stratum(
-        self, eqs: list[Poly], missed: frozenset[int], excluded: list[Poly], depth: int, ceiling: int = 99
+        self,
+        eqs: list[Poly],
+        missed: frozenset[int],
+        excluded: list[Poly],
+        depth: int,
+        ceiling: int = 99,
+        charts: frozenset[int] = frozenset(),
     ) -> None:
+        """One stratum and all below it; missed positions `charts` are looked at elsewhere, without
+        its last equations, with all strata of their own."""
         name = (frozenset(ring.key(p) for p in eqs), missed)
         if name in self.seen:
             return
@@ -134,19 +146,17 @@ class Surveyor:
         done = list(excluded)
         for _, (p, top) in sorted(todo.items(), key=lambda item: (len(item[1][0]), item[0])):
             self.progress(f"{self.result.strata} strata, {self.result.cells} cells")
-            self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling))
+            self._stratum([*eqs, p], missed, done, depth + 1, min(top, ceiling), charts | run.charts)
             done.append(p)
         for system in points:
             size = system[0].total_degree() * system[-1].total_degree()
             if size > EXACT_SIZE:
                 self.result.not_examined.append("critical points of a border curve")
                 continue
-            self._stratum([*eqs, *system], missed, list(excluded), depth + 2)
-        bound = {k for p in eqs for k in ring.params_in(p)}
-        for step in sorted(run.charts - missed):
-            own = {k for (s, _), k in self.program.frame.slots.items() if s == step}
-            if (not missed or step > max(missed)) and not own & bound:
-                self._stratum(list(eqs), missed | {step}, list(excluded), depth, ceiling)
+            self._stratum([*eqs, *system], missed, list(excluded), depth + 2, charts=charts | run.charts)
+        for chart in sorted(run.charts - charts):
+            if not missed or chart > max(missed):
+                self._stratum(list(eqs), missed | {chart}, list(excluded), depth, ceiling)
 
     def _lift(
         self, comp: Component, register: Register, curves: list[Poly], exact: list[Poly], depth: int
@@ -184,6 +194,8 @@ class Surveyor:
 
     def _component(self, comp: Component, register: Register, depth: int) -> None:
         comp.eliminations.tick = self.tick
+        if len(comp.free) >= MANY and self._uniform(comp, register, depth):
+            return
         order = self._order(comp, register)
         tower = comp.ground()
         while True:
@@ -207,6 +219,30 @@ class Surveyor:
                 self.result.places += places
                 return
             order = self._order(comp, register)
+
+    def _uniform(self, comp: Component, register: Register, depth: int) -> bool:
+        """Whether the statements read no sign at all at some admitted figure of the component.
+
+        Lemma: what is read without a sign is read alike on all its figures, so one admitted figure
+        stands for the whole component and no cells are needed.  (|s| reads the sign of s; the
+        squares of two lengths compare without one.)
+        """
+        for sample in islice(likely_samples(comp), SAMPLES):
+            self.tick()
+            try:
+                for branch in branches(comp.ground(), sample):
+                    place = self._judge(comp, branch, register, depth)
+                    if place is None:
+                        continue
+                    if register.read_by("thesis"):
+                        return False
+                    special = register.of(["thin", "avoid"]).values()
+                    if not any(ring.substitute(p, sample).is_zero() for p in special):
+                        self.result.places.append(place)
+                        return True
+            except Unsettled:
+                continue
+        return False
 
     def _judge(self, comp: Component, branch: Branch, register: Register, depth: int) -> Place | None:
         spot = Spot(comp, branch, register)
