@@ -13,7 +13,7 @@ from surdwise.figure.vocabulary import CONSTRUCTIONS
 from surdwise.sheet import FORMS
 
 SRC = Path(__file__).parents[1] / "src" / "surdwise"
-ORDER = ["sheet", "field", "figure", "thesis", "verdict"]
+ORDER = ["sheet", "field", "figure", "thesis", "verdict", "report", "notebook", "review", "benchmark"]
 
 
 def _imports(path: Path) -> set[str]:

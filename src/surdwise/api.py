@@ -14,7 +14,7 @@ from statistics import median
 
 from .figure.program import frames_for
 from .sheet import Sheet, SurdwiseError, read_file, read_text, show
-from .sheet.tree import Comparison, Line
+from .sheet.tree import CentreOf, Comparison, Line, Named
 from .thesis.export import EXPORTS, legend
 from .thesis.formal import Thesis, thesis
 from .thesis.formulations import Formulation, formulate
@@ -106,8 +106,21 @@ def _rewritten(sheet: Sheet, line: Line, forms: Sequence[Form]) -> Rewriting:
         return Rewriting(show(claim), None, (), "not a single equality or inequality between quantities")
     from .figure.scale import keeps_scale
 
+    if _names_a_curve(claim):
+        # the polynomials are written over free points, which know no curve by its name
+        return Rewriting(show(claim), None, (), "the claim speaks of a line or circle by its name")
     t = thesis(claim, points_of(claim), keeps_scale(sheet))
     return Rewriting(show(claim), t, tuple(formulate(t, f) for f in forms))
+
+
+def _names_a_curve(node: object) -> bool:
+    if isinstance(node, (Named, CentreOf)):
+        return True
+    if isinstance(node, tuple):
+        return any(_names_a_curve(x) for x in node)
+    if hasattr(node, "__dataclass_fields__"):
+        return any(_names_a_curve(getattr(node, f)) for f in node.__dataclass_fields__)
+    return False
 
 
 def points_of(claim: Comparison) -> list[str]:
@@ -151,3 +164,19 @@ def compare(sheet: Sheet, repeat: int = 5) -> tuple[Cost, ...]:
             runs = sorted(formulate(r.thesis, f.form).seconds for _ in range(repeat))
             out.append(Cost(r.claim, f, median(runs), runs[-1] - runs[0]))
     return tuple(out)
+
+
+def _shown(name: str) -> Callable[[object], str]:
+    """A display hook that loads the notebook room when it is called."""
+
+    def hook(self: object) -> str:
+        from . import notebook
+
+        return str(getattr(notebook, name)(self))
+
+    return hook
+
+
+for _cls in (Sheet, Decision, Rewriting, Formulation):
+    for _name, _kind in (("_repr_html_", "html"), ("_repr_latex_", "latex")):
+        setattr(_cls, _name, _shown(_kind))

@@ -5,7 +5,6 @@ from __future__ import annotations
 import json
 import sys
 import time
-from collections.abc import Callable
 from pathlib import Path
 from typing import TYPE_CHECKING, Annotated, Any
 
@@ -26,9 +25,7 @@ app = typer.Typer(
 )
 
 BAD_SHEET = 2
-DEFAULT_SECONDS = 60.0
 QUIET = 2.0  # seconds without a word about progress
-GRACE = 0.5  # seconds that the work has to come to its own stop before it is killed
 
 Sheets = Annotated[list[Path], typer.Argument(help="Claim sheets.", show_default=False)]
 TimeLimit = Annotated[
@@ -91,18 +88,6 @@ class _Watch:
             self.status.stop()
 
 
-def _decide_all(sheet: Sheet, soft: float, frame: str | None, tell: Callable[[str, object], None]) -> object:
-    from .api import decide
-
-    return decide(
-        sheet,
-        time_limit=soft,
-        progress=lambda text: tell("progress", text),
-        frame=frame,
-        report=lambda known: tell("partial", known),
-    )
-
-
 @app.command()
 def decide(
     sheets: Sheets,
@@ -122,7 +107,7 @@ def decide(
     mended = []
     for path in sheets:
         for sheet in _read(path):
-            decisions = decided(sheet, time_limit, memory_limit, frame)
+            decisions = _decided(sheet, time_limit, memory_limit, frame)
             done += decisions
             if repair is not None:
                 from .api import repair as mend
@@ -140,41 +125,23 @@ def decide(
     raise typer.Exit(worst([d.verdict for d in done]))
 
 
-def decided(
-    sheet: Sheet, seconds: float | None = None, mebibytes: int | None = None, frame: str | None = None
-) -> list[Decision]:
-    """Decisions of one sheet, each claim in a process that is killed when its time is up."""
-    from dataclasses import replace
+def _decided(sheet: Sheet, seconds: float | None, mebibytes: int | None, frame: str | None) -> list[Decision]:
+    """Decisions of one sheet, with progress on a terminal."""
+    from .guarded import decided
 
+    _check_frame(sheet, frame)
+    watch = _Watch()
+    try:
+        return decided(sheet, seconds, mebibytes, frame, watch if sys.stderr.isatty() else None)
+    finally:
+        watch.stop()
+
+
+def _check_frame(sheet: Sheet, frame: str | None) -> None:
     from .figure.program import frames_for
-    from .limits import LimitReached, run_guarded
-    from .sheet import show
-    from .verdict.outcome import Decision, Verdict
 
     if frame is not None and frame not in frames_for(sheet):
         _usage(f"expected one of {', '.join(frames_for(sheet))} after --frame, got {frame!r}")
-    soft = DEFAULT_SECONDS if seconds is None else seconds
-    out = []
-    for line in sheet.claims:
-        one = replace(sheet, claims=(line,))
-        watch = _Watch()
-        try:
-            out += run_guarded(
-                _decide_all,
-                one,
-                soft,
-                frame,
-                seconds=soft + GRACE,
-                mebibytes=mebibytes,
-                progress=watch if sys.stderr.isatty() else None,
-            )
-        except LimitReached as e:
-            why = f"{e} ({soft:g} s)" if "time" in str(e) else str(e)
-            known = e.partial or Decision(sheet.file, sheet.title, show(line.body), Verdict.UNDECIDED)
-            out.append(replace(known, reason=f"{known.reason}{why}", seconds=soft))
-        finally:
-            watch.stop()
-    return out
 
 
 @app.command()
@@ -191,7 +158,7 @@ def rewrite(
     """Rewrite every claim free of roots, in five formulations."""
     from dataclasses import replace
 
-    from .api import rewrite as work
+    from .guarded import rewritten
     from .printing import table
     from .thesis.export import EXPORTS
     from .thesis.parts import Form
@@ -205,10 +172,10 @@ def rewrite(
     script = to in ("sympy", "singular")
     mark = {"sympy": "# ", "singular": "// ", "latex": "% ", "text": ""}[to]
     for s in _read(sheet):
-        decided = decided(s) if form is None and to == "text" else []
-        for i, r in enumerate(work(s, forms)):
-            if decided:
-                r = replace(r, statuses=decided[i].algebraic, variants=decided[i].variants)
+        found = _decided(s, None, None, None) if form is None and to == "text" else []
+        for i, r in enumerate(rewritten(s, forms)):
+            if found:
+                r = replace(r, statuses=found[i].algebraic, variants=found[i].variants)
             print(f"{mark}claim {r.claim}")
             if r.thesis is None:
                 print(f"{mark}not rewritten: {r.why_not}")
@@ -266,24 +233,43 @@ def _cost_row(name: str, f: object, seconds: float) -> list[str]:
 @app.command()
 def compare(
     sheets: Sheets,
-    repeat: Annotated[int, typer.Option("--repeat", help="Runs of each formulation.", min=1)] = 5,
+    engine: Annotated[
+        list[str] | None,
+        typer.Option(
+            "--engine", help="tower, singular or sympy; may be repeated; all that are installed if not given."
+        ),
+    ] = None,
+    repeat: Annotated[int, typer.Option("--repeat", help="Counted runs.", min=1)] = 5,
+    warm_up: Annotated[int, typer.Option("--warm-up", help="Runs before them.", min=0)] = 1,
+    time_limit: Annotated[float, typer.Option("--time-limit", help="Seconds for each run.", min=0.01)] = 10.0,
+    memory_limit: Annotated[int, typer.Option("--memory-limit", help="MiB for each run.", min=16)] = 2048,
+    csv: Annotated[Path | None, typer.Option("--csv", help="Write a table to this file.")] = None,
+    jsonl: Annotated[Path | None, typer.Option("--jsonl", help="Write one JSON object a row.")] = None,
+    html: Annotated[Path | None, typer.Option("--html", help="Write a page with charts.")] = None,
+    resume: Annotated[bool, typer.Option("--resume", help="Go on from the journal beside --jsonl.")] = False,
 ) -> None:
-    """What each formulation of every equality costs: medians of repeated runs."""
-    from .api import compare as work
-    from .printing import table
+    """What each formulation costs through each engine, and whether its answer is the literal truth."""
+    from .benchmark import Options
+    from .benchmark import compare as work
 
-    for path in sheets:
-        for sheet in _read(path):
-            costs = work(sheet, repeat)
-            for claim in dict.fromkeys(c.claim for c in costs):
-                print(f"{claim}  ({sheet.file})\n")
-                head = ["formulation", "unknowns", "degree", "terms", "largest", "seconds", "spread"]
-                rows = [
-                    [*_cost_row(c.formulation.form.value, c.formulation, c.seconds), f"{c.spread:.6f}"]
-                    for c in costs
-                    if c.claim == claim
-                ]
-                print(table(head, rows) + "\n")
+    every = [s for path in sheets for s in _read(path)]
+    watch = _Watch()
+    try:
+        _, text = work(
+            every,
+            engine or [],
+            Options(repeat, warm_up, time_limit, memory_limit),
+            csv=csv,
+            jsonl=jsonl,
+            html_page=html,
+            resume=resume,
+            progress=watch if sys.stderr.isatty() else lambda text: None,
+        )
+    except SurdwiseError as e:
+        _usage(str(e))
+    finally:
+        watch.stop()
+    print(text)
 
 
 @app.command()
@@ -292,6 +278,75 @@ def words() -> None:
     from .sheet.reference import listing
 
     print(listing())
+
+
+@app.command()
+def report(
+    sheet: Annotated[Path, typer.Argument(help="A claim sheet.", show_default=False)],
+    out: Annotated[Path, typer.Option("--out", "-o", help="The page, .html or .tex.")],
+    frame: FrameChoice = None,
+    time_limit: TimeLimit = None,
+    memory_limit: MemoryLimit = None,
+) -> None:
+    """Write the sign-off page of a sheet."""
+    from .guarded import DEFAULT_SECONDS
+    from .report import write_report
+
+    for s in _read(sheet):
+        _check_frame(s, frame)
+    seconds = DEFAULT_SECONDS if time_limit is None else time_limit
+    raise typer.Exit(write_report(sheet, out, seconds, memory_limit, frame=frame))
+
+
+@app.command()
+def review(
+    folder: Annotated[Path, typer.Argument(help="A folder; every .claim file below it.", show_default=False)],
+    junit: Annotated[Path | None, typer.Option("--junit", help="Write JUnit XML to this file.")] = None,
+    jsonl: Annotated[Path | None, typer.Option("--jsonl", help="Write one JSON object a claim.")] = None,
+    resume: Annotated[bool, typer.Option("--resume", help="Go on where a review was stopped.")] = False,
+    workers: Annotated[
+        int | None, typer.Option("--workers", help="Processes; all processors if not given.", min=1)
+    ] = None,
+    time_limit: TimeLimit = None,
+    memory_limit: MemoryLimit = None,
+    summary: Annotated[
+        Path | None, typer.Option("--summary", help="Write a summary and report pages to this folder.")
+    ] = None,
+    scheduler: Annotated[
+        str | None, typer.Option("--scheduler", help="Address of a dask scheduler to work on.")
+    ] = None,
+) -> None:
+    """Decide every claim of every sheet below a folder."""
+    from .guarded import DEFAULT_SECONDS
+    from .review import review as work
+
+    raise typer.Exit(
+        work(
+            folder,
+            junit=junit,
+            jsonl=jsonl,
+            resume=resume,
+            workers=workers,
+            summary=summary,
+            time_limit=DEFAULT_SECONDS if time_limit is None else time_limit,
+            memory_limit=memory_limit,
+            scheduler=scheduler,
+        )
+    )
+
+
+@app.command()
+def new(
+    file: Annotated[Path, typer.Argument(help="The sheet to write.", show_default=False)],
+    force: Annotated[bool, typer.Option("--force", help="Replace a file that exists.")] = False,
+) -> None:
+    """Write a commented sheet to start from."""
+    from .template import new_sheet
+
+    try:
+        new_sheet(file, force)
+    except SurdwiseError as e:
+        _usage(str(e))
 
 
 def _usage(text: str) -> None:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import gc
 import os
 import pickle
 import resource
@@ -9,12 +10,11 @@ import select
 import signal
 import time
 from collections.abc import Callable
-from concurrent.futures import TimeoutError as OutOfWait
 from typing import Any, NoReturn
 
 MIB = 1 << 20
-PAUSE = 0.2  # seconds between two texts of progress
 GRACE = 0.2  # seconds between asking a worker to stop and killing it
+PAUSE = 0.2  # seconds between two texts of progress
 
 
 class LimitReached(Exception):
@@ -101,6 +101,8 @@ def _work(
             last = now
             send(kind, what)
 
+    # no finaliser of the parent's objects (a cluster client's, say) may run here
+    gc.freeze()
     code = 1
     try:
         if mebibytes is not None:
@@ -143,36 +145,6 @@ def _bytes(pipe: Any, count: int, end: float, idle: Callable[[], None]) -> bytes
             return b""
         out += chunk
     return out
-
-
-def run_limited(
-    work: Callable[..., Any], *args: Any, seconds: float | None = None, mebibytes: int | None = None
-) -> Any:
-    """work(*args) in a process of its own, killed after `seconds` and refused more than
-    `mebibytes` of address space beyond what it starts with.
-
-    Raises LimitReached; errors of the work itself come through unchanged.
-    """
-    from multiprocessing import get_context
-
-    from pebble import CONSTS, ProcessExpired, ProcessPool
-
-    CONSTS.term_timeout = GRACE
-    with ProcessPool(
-        max_workers=1,
-        context=get_context("fork"),
-        initializer=_confine,
-        initargs=[mebibytes],
-    ) as pool:
-        future = pool.schedule(work, args=args, timeout=seconds)
-        try:
-            return future.result()
-        except OutOfWait as e:
-            raise LimitReached("the time limit was reached") from e
-        except (ProcessExpired, MemoryError) as e:
-            if mebibytes is None:
-                raise LimitReached("the worker process died") from e
-            raise LimitReached(f"the memory limit of {mebibytes} MiB was reached") from e
 
 
 def _confine(mebibytes: int | None) -> None:

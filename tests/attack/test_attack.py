@@ -7,7 +7,7 @@ from pathlib import Path
 import pytest
 
 from surdwise import Sheet
-from surdwise.cli import decided
+from surdwise.guarded import decided
 from surdwise.sheet import read_file, read_text
 
 from .handbook import HANDBOOK

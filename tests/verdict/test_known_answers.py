@@ -5,7 +5,7 @@ from __future__ import annotations
 import pytest
 
 from surdwise import Verdict, decide, read
-from surdwise.cli import decided
+from surdwise.guarded import decided
 
 # sheet text; verdict; condition (or equality case for an inequality) as the program words it
 ANSWERS = [

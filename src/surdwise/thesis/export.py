@@ -59,18 +59,36 @@ def terms(p: Poly, table: dict[int, str]) -> list[tuple[int, list[tuple[str, int
     return out
 
 
-def plain(p: Poly, table: dict[int, str], times: str = "*", power: str = "^") -> str:
-    """A polynomial on one line."""
-    parts: list[str] = []
+def _signed(p: Poly, table: dict[int, str], times: str, power: str) -> list[tuple[str, str]]:
+    """The sign and the rest of every term."""
+    out: list[tuple[str, str]] = []
     for c, powers in terms(p, table):
         body = times.join(v if e == 1 else f"{v}{power}{e}" for v, e in powers)
         size = abs(c)
         piece = body if size == 1 and body else f"{size}{times}{body}" if body else str(size)
-        parts.append(("- " if c < 0 else "+ ") + piece)
+        out.append(("-" if c < 0 else "+", piece))
+    return out
+
+
+def plain(p: Poly, table: dict[int, str], times: str = "*", power: str = "^") -> str:
+    """A polynomial on one line."""
+    parts = _signed(p, table, times, power)
     if not parts:
         return "0"
-    whole = " ".join(parts)
+    whole = " ".join(f"{sign} {piece}" for sign, piece in parts)
     return "-" + whole[2:] if whole.startswith("- ") else whole[2:]
+
+
+LONG_SUM = 200
+
+
+def _sum(p: Poly, table: dict[int, str]) -> str:
+    """A polynomial in Python's notation; a long one as a list of terms, since a sum of thousands is
+    nested too deeply for Python's own reader."""
+    if len(p) <= LONG_SUM:
+        return plain(p, table, "*", "**")
+    rows = [("-" if sign == "-" else "") + piece for sign, piece in _signed(p, table, "*", "**")]
+    return "Add(*[\n        " + ",\n        ".join(rows) + ",\n    ])"
 
 
 def to_text(t: Thesis, f: Formulation) -> str:
@@ -108,8 +126,9 @@ def to_sympy(t: Thesis, f: Formulation) -> str:
     """A script that defines `polynomials`, a list of SymPy expressions."""
     table = names(t)
     used = sorted({table[k] for p in f.polynomials for k, d in enumerate(p.degrees()) if d > 0})
-    rows = ",\n    ".join(plain(p, table, "*", "**") for p in f.polynomials)
-    head = "from sympy import symbols\n\n"
+    rows = ",\n    ".join(_sum(p, table) for p in f.polynomials)
+    long = any(len(p) > LONG_SUM for p in f.polynomials)
+    head = f"from sympy import {'Add, ' if long else ''}symbols\n\n"
     if used:
         comma = "," if len(used) == 1 else ""
         head += f"{', '.join(used)}{comma} = symbols({' '.join(used)!r}{', seq=True' if comma else ''})\n"

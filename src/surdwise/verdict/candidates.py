@@ -84,9 +84,28 @@ def says_the_same(c: Condition, claim: Condition) -> bool:
     """Whether a condition compares just what the claim compares: no news as a side condition."""
     if isinstance(c, (And, Or)):
         return any(says_the_same(x, claim) for x in c.args)
+    if isinstance(c, Relation) and isinstance(claim, Relation):
+        return c.form == claim.form and _places(c) == _places(claim)
     if not isinstance(c, Comparison) or not isinstance(claim, Comparison):
         return c == claim
     return _sides_of(c) == _sides_of(claim)
+
+
+SYMMETRIC = ("parallel_lines", "perpendicular_lines", "collinear", "concyclic")
+
+
+def _places(c: Relation) -> object:
+    """The arguments of a relation, without order where the order says nothing."""
+    if c.form not in SYMMETRIC:
+        return c.args
+    return frozenset(
+        frozenset(map(str, a.points))
+        if isinstance(a, Through)
+        else frozenset(map(str, a))
+        if isinstance(a, tuple)
+        else a
+        for a in c.args
+    )
 
 
 def _sides_of(c: Comparison) -> set[object]:
