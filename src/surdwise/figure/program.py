@@ -22,7 +22,7 @@ from .conditions import equations
 from .quantities import difference
 from .scale import keeps_scale
 from .vocabulary import CONSTRUCTIONS
-from .vocabulary.placements import CARTESIAN, HALF_ANGLES, kinds_of
+from .vocabulary.placements import CARTESIAN, CONSTRAINED, HALF_ANGLES, kinds_of
 
 
 @dataclass
@@ -130,6 +130,8 @@ def frames_for(sheet: Sheet) -> list[str]:
     kinds = kinds_of(first.form) if isinstance(first, Fact) else []
     if HALF_ANGLES not in kinds and any(f.form == "on_circle" for f in facts):
         kinds = [*kinds, HALF_ANGLES]
+    if isinstance(first, Fact) and first.form in CONSTRAINED:
+        return [*kinds, CARTESIAN]
     return [CARTESIAN, *kinds]
 
 

@@ -10,7 +10,7 @@ from ..field.tower import Element
 from ..figure.component import Component
 from ..figure.conditions import truth
 from ..figure.program import frames_for, program
-from ..figure.vocabulary.placements import HALF_ANGLES
+from ..figure.vocabulary.placements import CARTESIAN, HALF_ANGLES
 from ..sheet.tree import Condition, Sheet
 from .samples import likely_samples
 from .spot import Register, Spot, Undefined
@@ -39,8 +39,9 @@ def frames_by_cost(sheet: Sheet, claim: Condition) -> list[str]:
     """The frames that can hold the sheet, that of least predicted cost first; Cartesian where
     nothing is gained."""
     kinds = frames_for(sheet)
-    if len(kinds) == 1:
-        return kinds
+    if len(kinds) == 1 or kinds[0] != CARTESIAN:
+        # where the Cartesian frame is not the first it is dear: only on request
+        return kinds[:1]
     return sorted(kinds, key=lambda k: (_cost(sheet, claim, k), kinds.index(k)))
 
 

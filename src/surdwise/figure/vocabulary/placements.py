@@ -140,6 +140,10 @@ PLACEMENTS: dict[tuple[str, str], Callable[..., None]] = {
 }
 
 
+# shapes that the Cartesian frame holds by an equation between lengths only: it serves on request
+CONSTRAINED = {"tangential_quadrilateral"}
+
+
 def placed_by(b: Builder, form: str, names: tuple[Pt, ...]) -> bool:
     """Place a sheet's first shape by the frame, if the frame knows how."""
     fn = PLACEMENTS.get((b.frame.kind, form))
