@@ -13,7 +13,7 @@ from itertools import combinations, permutations
 
 from ..field.tower import Element
 from ..figure.component import Component
-from ..figure.plane import orientation
+from ..figure.plane import Straight, orientation
 from ..sheet.tree import (
     And,
     Binary,
@@ -21,6 +21,7 @@ from ..sheet.tree import (
     Condition,
     Fact,
     Measure,
+    Named,
     Not,
     Number,
     Or,
@@ -64,6 +65,7 @@ def candidates(sheet: Sheet, comps: Sequence[Component], claim: Condition) -> It
     yield from _insides(pts, straight, shapes)
     yield from _lengths_compared(pts, used, shapes, _constants(sheet))
     yield from _convexes(sheet, pts)
+    yield from _named_curves(pts, comps)
     if len(pts) <= 6:
         yield from _incidences(pts, straight)
 
@@ -78,6 +80,19 @@ def _incidences(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candi
         for one, two in (((a, b), (c, d)), ((a, c), (b, d)), ((a, d), (b, c))):
             yield Candidate(Relation("perpendicular_lines", (Through(one), Through(two))), 2.3)
             yield Candidate(Relation("parallel_lines", (Through(one), Through(two))), 2.3)
+
+
+def _named_curves(pts: list[Pt], comps: Sequence[Component]) -> Iterator[Candidate]:
+    """Points on the sheet's named lines and circles, and on the same side of a named line."""
+    for name, curve in comps[0].curves.items() if comps else ():
+        ref = Named(name)
+        form = "on_line" if isinstance(curve, Straight) else "on_circle"
+        for p in pts:
+            yield Candidate(Relation(form, (p, ref)), 1.2)
+        if isinstance(curve, Straight):
+            for p, q in combinations(pts, 2):
+                yield Candidate(Relation("same_side", (p, q, ref)), 1.3)
+                yield Candidate(Relation("opposite_sides", (p, q, ref)), 1.3)
 
 
 def says_the_same(c: Condition, claim: Condition) -> bool:
@@ -137,6 +152,7 @@ def _betweens(pts: list[Pt], straight: set[tuple[str, ...]]) -> Iterator[Candida
             for u, v in combinations([p for p in pts if p != mid], 2):
                 if tuple(sorted((u.name, v.name, mid.name))) not in straight:
                     yield Candidate(Relation("between", (mid, u, v)), 1.7)
+                    yield Candidate(Relation("on_segment", (mid, (u, v))), 1.75)
     for tri in straight:
         for c in tri:
             a, b = (x for x in tri if x != c)

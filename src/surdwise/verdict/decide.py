@@ -18,6 +18,7 @@ from ..sheet.show import show
 from ..sheet.tree import Comparison, Condition, Line, Relation, Sheet
 from .ahead import Ahead, look_ahead
 from .algebraic import AlgebraicSide, algebraic_side, dominant
+from .conflict import conflict
 from .explain import explain
 from .frames import frames_by_cost
 from .limit import sharpness
@@ -357,6 +358,9 @@ def _degenerate(found: Survey) -> tuple[str, ...]:
 
 
 def _why_empty(case: Case, found: Survey) -> str:
+    words = conflict(case)
+    if words:
+        return words
     if not found.dead:
         return "no real figure meets every line of the sheet"
     step, why = max(found.dead)

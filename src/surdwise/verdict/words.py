@@ -164,12 +164,12 @@ def equations_in(c: Condition) -> int:
 
 def _in_line(x: Literal, top: int) -> int:
     c = x.condition
-    return int(isinstance(c, Relation) and c.form == "between" and not x.mask & top)
+    return int(isinstance(c, Relation) and c.form in ("between", "on_segment") and not x.mask & top)
 
 
 def _thin(target: int, whole: int, lits: Sequence[Literal], codimension: int, top: int) -> Literal | None:
     """Cheapest conjunction with enough equations, or (for several thin pieces) a disjunction.
-    `C between A and B` is an equation too where it is true at no top place."""
+    `C between A and B` or on a segment is an equation too where it is true at no top place."""
     off = whole & ~target
     over = [x for x in lits if x.mask & target == target]
     weight = {id(x): equations_in(x.condition) or _in_line(x, top) for x in over}
