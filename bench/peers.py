@@ -1,4 +1,5 @@
-"""Nine inequalities by surdwise and by two SMT solvers from the registries (z3, cvc5).
+"""Nine inequalities by surdwise, by two SMT solvers from the registries (z3, cvc5) and by QEPCAD
+from Debian, where it is installed.
 
 The solvers get the negation over the reals, lengths as non-negative unknowns with their squares
 as equations, each in a process of its own with a hard time limit.
@@ -8,6 +9,7 @@ from __future__ import annotations
 
 import multiprocessing
 import resource
+import shutil
 import time
 from collections.abc import Callable
 from queue import Empty
@@ -139,6 +141,65 @@ def _cvc5(text: str) -> str:
         out += str(command.invoke(solver, symbols))
 
 
+def _qepcad(text: str) -> str:
+    """The same formula by cylindrical algebraic decomposition: all unknowns bound by `exists`."""
+    import subprocess
+
+    unknowns, facts = _infix(text)
+    inner = " /\\ ".join(facts)
+    bound = "".join(f"(E {v})" for v in unknowns)
+    script = f"[ claim ]\n({','.join(unknowns)})\n0\n{bound}[{inner}].\nfinish\n"
+    command = ["timeout", "61", "qepcad", "+N50000000"]
+    run = subprocess.run(command, input=script, capture_output=True, text=True, check=False)
+    words = run.stdout.split("An equivalent quantifier-free formula:")
+    if len(words) < 2:
+        return "failed: " + (run.stdout.strip().splitlines() or ["no output"])[-1][:40]
+    return {"FALSE": "unsat", "TRUE": "sat"}.get(words[1].split()[0], words[1].split()[0])
+
+
+def _infix(text: str) -> tuple[list[str], list[str]]:
+    """Unknowns and facts of SMT-LIB text in the notation of QEPCAD (polynomials expanded)."""
+    import re
+
+    import sympy as sp
+
+    tokens = re.findall(r"[()]|[^\s()]+", text)
+
+    def tree(at: int) -> tuple[object, int]:
+        if tokens[at] != "(":
+            return tokens[at], at + 1
+        out = []
+        at += 1
+        while tokens[at] != ")":
+            x, at = tree(at)
+            out.append(x)
+        return out, at + 1
+
+    def value(x: object) -> sp.Expr:
+        if isinstance(x, str):
+            return sp.Rational(x) if x.isdigit() else sp.Symbol(x)
+        assert isinstance(x, list)
+        args = [value(y) for y in x[1:]]
+        if x[0] == "+":
+            return sp.Add(*args)
+        if x[0] == "*":
+            return sp.Mul(*args)
+        return -args[0] if len(args) == 1 else args[0] - args[1]
+
+    unknowns, facts = [], []
+    at = 0
+    while at < len(tokens):
+        node, at = tree(at)
+        assert isinstance(node, list)
+        if node[0] == "declare-const":
+            unknowns.append(node[1])
+        elif node[0] == "assert":
+            op, left, right = node[1]
+            p = sp.expand(value(left) - value(right))
+            facts.append(str(p).replace("**", "^").replace("*", " ") + f" {op} 0")
+    return unknowns, facts
+
+
 def _surdwise(text: str) -> str:
     (sheet,) = read(text + "\n")
     (d,) = decide(sheet)
@@ -177,17 +238,18 @@ def inequality_table(seconds: float) -> list[str]:
         "",
         f"Seconds; solvers from the registries, {seconds:g} s each (`unsat` means proved).",
         "",
-        "| statement | surdwise | MiB | answer | z3 | cvc5 |",
-        "| --- | --- | --- | --- | --- | --- |",
+        "| statement | surdwise | MiB | answer | z3 | cvc5 | QEPCAD |",
+        "| --- | --- | --- | --- | --- | --- | --- |",
     ]
     for name, sheet, smt in CASES:
         answer, s, mib = limited(_surdwise, sheet, 120)
         cells = [name, f"{s:.2f}", str(mib), answer]
-        for solver in (_z3, _cvc5):
+        for solver in (_z3, _cvc5, *([_qepcad] if shutil.which("qepcad") else [])):
             if seconds <= 0:
                 cells.append("not run")
                 continue
             found, t, _ = limited(solver, smt, seconds)
             cells.append(f"no answer in {seconds:g} s" if found == "no answer" else f"{found}, {t:.2f}")
+        cells += ["not installed"] * (7 - len(cells))
         rows.append("| " + " | ".join(cells) + " |")
     return [*rows, ""]

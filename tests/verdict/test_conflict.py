@@ -9,7 +9,8 @@ from surdwise import Verdict, decide, read
 # (sheet, the lines to be named); Euclid I.20, I.5 and III.20 stand behind the first three
 TABLE = [
     (
-        "given triangle ABC\ngiven point P\ngiven |AB| = 4\ngiven |BC| = 2\ngiven |CA| = 1\ngiven |PA| = |PB|\n",
+        "given triangle ABC\ngiven point P\ngiven |AB| = 4\ngiven |BC| = 2\n"
+        "given |CA| = 1\ngiven |PA| = |PB|\n",
         {3, 4, 5},
     ),
     ("given isosceles triangle ABC with apex A\nprovided |AB| < |AC|\nprovided |AB| < 2|BC|\n", {2}),
