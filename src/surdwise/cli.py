@@ -95,19 +95,32 @@ def decide(
     repair: Annotated[
         Path | None, typer.Option("--repair", help="Write the sheet with its side conditions to this file.")
     ] = None,
+    certificate: Annotated[
+        Path | None, typer.Option("--certificate", help="Write what a second arithmetic can recheck.")
+    ] = None,
     frame: FrameChoice = None,
     time_limit: TimeLimit = None,
     memory_limit: MemoryLimit = None,
 ) -> None:
     """Decide every claim: does it hold as written, and exactly where?"""
+    if certificate is not None and len(sheets) != 1:
+        _usage(f"expected one file with --certificate, got {len(sheets)}")
+    from dataclasses import replace
+
     from .jsonform import decision_object, worst
     from .printing import decision_text, wants_colour
 
     done = []
     mended = []
     for path in sheets:
-        for sheet in _read(path):
-            decisions = _decided(sheet, time_limit, memory_limit, frame)
+        read = _read(path)
+        answers = [_decided(sheet, time_limit, memory_limit, frame) for sheet in read]
+        if certificate is not None:
+            from .certificate import write_certificate
+
+            note = write_certificate(certificate, path.read_text(encoding="utf-8-sig"), answers)
+            answers = [[replace(d, certificate=note.file) for d in ds] for ds in answers]
+        for sheet, decisions in zip(read, answers, strict=True):
             done += decisions
             if repair is not None:
                 from .api import repair as mend
@@ -278,6 +291,17 @@ def words() -> None:
     from .sheet.reference import listing
 
     print(listing())
+
+
+@app.command()
+def recheck(
+    certificate: Annotated[Path, typer.Argument(help="A certificate.", show_default=False)],
+    time_limit: TimeLimit = None,
+) -> None:
+    """Recheck a certificate with a second arithmetic that shares no code with this program."""
+    from surdwise_recheck.__main__ import main as work
+
+    raise typer.Exit(work([str(certificate), *(["--time-limit", str(time_limit)] if time_limit else [])]))
 
 
 @app.command()
