@@ -15,7 +15,7 @@ from hypothesis import HealthCheck, assume, given, settings
 
 import surdwise
 from surdwise.notebook import InteropError, from_sympy, to_sympy
-from surdwise.sheet import Binary, Measure, Number, Quantity, Unary, read_line
+from surdwise.sheet import Binary, Measure, Number, Quantity, SheetError, Unary, read_line
 from surdwise.thesis.parts import Form
 
 from ..sheet.trees import comparisons, quantities
@@ -105,7 +105,12 @@ def test_the_expression_has_the_value_of_the_tree(q: Any) -> None:
     got = complex(e.xreplace(functions).evalf())
     assert abs(got - wanted) < 1e-6 * abs(wanted)
     if not e.has(sympy.I):
-        again = to_sympy(read_line("claim", f"{from_sympy(e)} = 0"))
+        try:
+            again = to_sympy(read_line("claim", f"{from_sympy(e)} = 0"))
+        except SheetError as refused:
+            # SymPy makes one power of a power; sheets have exponents up to 64
+            assert "exponent" in str(refused)
+            return
         assert complex(again.lhs.xreplace(functions).evalf()) == pytest.approx(wanted, rel=1e-6)
 
 

@@ -13,11 +13,13 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass, field
 from fractions import Fraction
 
+from ..field import ring
 from ..field.real import Unsettled, branches
-from ..field.ring import Rational, rational
+from ..field.ring import Poly, Rational, rational
 from ..field.sketch import Evaluator, Sketch, quotient
 from ..figure.component import Component
 from ..figure.conditions import truth
+from ..figure.program import figure_borders
 from ..figure.quantities import value
 from ..sheet.tree import Comparison, Condition
 from .samples import small_samples
@@ -51,6 +53,7 @@ class Search:
     claim: Condition
     tick: Callable[[], None]
     found: Found = field(default_factory=Found)
+    borders: dict[int, list[Poly]] = field(default_factory=dict)
 
     def run(self) -> Found:
         """Search small parameters, then by descent; stop once both truths are seen."""
@@ -110,7 +113,12 @@ class Search:
                             return
 
     def _confirm(self, comp: Component, sample: dict[int, Rational]) -> None:
-        """Judge a sample exactly, on every real branch."""
+        """Judge a sample exactly, on every real branch; places where the figure's own algebra changes
+        are left out."""
+        if id(comp) not in self.borders:
+            self.borders[id(comp)] = list(figure_borders(comp).values())
+        if any(ring.substitute(p, sample).is_zero() for p in self.borders[id(comp)]):
+            return
         try:
             for branch in branches(comp.ground(), sample):
                 spot = Lone(comp, branch)

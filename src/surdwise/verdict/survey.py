@@ -236,8 +236,7 @@ class Surveyor:
                         continue
                     if register.read_by("thesis"):
                         return False
-                    special = register.of(["thin", "avoid"]).values()
-                    if not any(ring.substitute(p, sample).is_zero() for p in special):
+                    if not any(ring.substitute(p, sample).is_zero() for p in register.polys.values()):
                         self.result.places.append(place)
                         return True
             except Unsettled:
