@@ -13,11 +13,12 @@ from fractions import Fraction
 
 from .text_given import Given
 from .text_names import Misnamed, Names
-from .text_statements import DEEPEST, Statements
+from .text_statements import Statements
 from .text_tokens import Cursor, Unreadable, tokens
 from .tree import Build, Condition, FrameSign, Line, Sheet
 
 LARGEST = 1_000_000  # characters
+DEEPEST = 200  # levels of a tree
 HIGHEST_DEGREE = 400  # of one parameter
 MOST_TERMS = 5000
 KEYWORDS = ("title", "source", "given", "provided", "claim")

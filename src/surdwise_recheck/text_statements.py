@@ -25,7 +25,7 @@ from .tree import (
     Says,
 )
 
-DEEPEST = 200  # levels of parentheses
+PARENTHESES = 100  # nested; the recursion of this reader is some five calls for each
 HIGHEST_POWER = 64
 FEWEST = {"collinear": 3, "concyclic": 4, "distinct": 2}
 _OF_RUN = {
@@ -48,8 +48,8 @@ class Statements(Cursor):
     def enter(self) -> None:
         """One level deeper."""
         self.depth += 1
-        if self.depth > DEEPEST:
-            raise Unreadable(self.here.column, f"more than {DEEPEST} levels")
+        if self.depth > PARENTHESES:
+            raise Unreadable(self.here.column, f"more than {PARENTHESES} levels")
 
     # ------------------------------------------------------------ references
 

@@ -10,6 +10,7 @@ from surdwise import Sheet
 from surdwise.guarded import decided
 from surdwise.sheet import read_file, read_text
 
+from ..verdict.test_triangle_inequalities import TABLE as INEQUALITIES
 from .handbook import HANDBOOK
 from .judge import complaints
 from .sheets import SHEETS
@@ -24,6 +25,8 @@ def all_sheets() -> list[tuple[str, Sheet]]:
     for text in (*SHEETS, *HANDBOOK):
         for s in read_text(text.strip() + "\n", "sheets.py"):
             out.append((s.title or s.claims[0].text, s))
+    for row in INEQUALITIES:
+        out += [(row[0], s) for s in read_text(f"given triangle ABC\nclaim {row[0]}\n")]
     return out
 
 
