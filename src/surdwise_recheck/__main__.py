@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import argparse
 import sys
+from contextlib import suppress
 from pathlib import Path
 
 from .check import Refused, outcome_of, recheck
@@ -24,13 +25,13 @@ def main(arguments: list[str] | None = None) -> int:
     except (Refused, OSError) as e:
         print(f"rejected: {e}")
         return CODES[Outcome.REJECTED]
+    lines = []
     for r in reports:
-        why = (
-            ""
-            if r.outcome is Outcome.ACCEPTED
-            else f"; step {r.step}: expected {r.expected}, found {r.found}"
-        )
-        print(f"{r.outcome.value}: {r.text}: {r.verdict}{why}")
+        lines.append(f"{r.outcome.value}: {r.text}: {r.verdict}")
+        if r.outcome is not Outcome.ACCEPTED:
+            lines.append(f"    step {r.step}: expected {r.expected}, found {r.found}")
+    with suppress(BrokenPipeError):
+        print("\n".join(lines), flush=True)
     return CODES[outcome_of(reports)]
 
 
