@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from fractions import Fraction
-from itertools import product
+from itertools import pairwise, product
 
 import mpmath
 import pytest
@@ -56,7 +56,7 @@ def test_close_sums_of_square_roots() -> None:
         for a, b, c in product(range(2, 30), repeat=3)
         if a < b < c
     )
-    gaps = sorted((t - s, x, y) for (s, x), (t, y) in zip(sums, sums[1:], strict=False) if t - s > 1e-12)
+    gaps = sorted((t - s, x, y) for (s, x), (t, y) in pairwise(sums) if t - s > 1e-12)
     for _, x, y in gaps[:20]:
         text = " + ".join(f"sqrt({n})" for n in y) + "".join(f" - sqrt({n})" for n in x)
         assert sign(text) == 1
