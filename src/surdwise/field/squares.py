@@ -14,11 +14,11 @@ from fractions import Fraction
 from typing import Any
 
 from . import ring
+from .echelon import Matrix, echelon
 from .ring import Poly
 
 Mono = tuple[int, ...]
 Coefficients = dict[Mono, Fraction]
-Matrix = list[list[Fraction]]
 
 LARGEST_BASIS = 40
 GRID = (0, 1, -1, 2, -2)
@@ -95,19 +95,7 @@ def _face(cs: Coefficients, basis: list[Mono], n: int) -> Matrix:
 def _null_space(rows: Matrix, n: int) -> Matrix:
     """A basis of the vectors orthogonal to all rows."""
     rows = [list(r) for r in rows]
-    lead: list[int] = []
-    for col in range(n):
-        k = len(lead)
-        at = next((r for r in range(k, len(rows)) if rows[r][col]), None)
-        if at is None:
-            continue
-        rows[k], rows[at] = rows[at], rows[k]
-        rows[k] = [x / rows[k][col] for x in rows[k]]
-        for r in range(len(rows)):
-            if r != k and rows[r][col]:
-                f = rows[r][col]
-                rows[r] = [x - f * y for x, y in zip(rows[r], rows[k], strict=True)]
-        lead.append(col)
+    lead = echelon(rows, n)
     out = []
     for col in range(n):
         if col not in lead:
@@ -202,19 +190,7 @@ def _put_back(rows: Matrix, goal: list[Fraction], s: list[Fraction]) -> list[Fra
     m = []
     for row, g in zip(rows, goal, strict=True):
         m.append([*row, g - sum((x * y for x, y in zip(row, s, strict=True)), Fraction(0))])
-    lead: list[int] = []
-    for col in range(len(s)):
-        k = len(lead)
-        at = next((i for i in range(k, len(m)) if m[i][col]), None)
-        if at is None:
-            continue
-        m[k], m[at] = m[at], m[k]
-        m[k] = [x / m[k][col] for x in m[k]]
-        for i in range(len(m)):
-            if i != k and m[i][col]:
-                f = m[i][col]
-                m[i] = [x - f * y for x, y in zip(m[i], m[k], strict=True)]
-        lead.append(col)
+    lead = echelon(m, len(s))
     if any(r[-1] for r in m[len(lead) :]):
         return None
     out = list(s)

@@ -14,6 +14,7 @@ from dataclasses import dataclass, field
 from fractions import Fraction
 from itertools import combinations
 
+from ..field.echelon import echelon
 from ..figure.conditions import Judge
 from ..figure.plane import Vec, cross, dot, square
 from ..sheet.show import show
@@ -328,19 +329,7 @@ def _solved(columns: Sequence[Row], goal: Row) -> list[Fraction] | None:
     """Exact coefficients with sum of coefficient * column = goal, free ones zero; or None."""
     keys = sorted({p for r in (*columns, goal) for p in r})
     rows = [[c.get(p, Fraction(0)) for c in columns] + [goal.get(p, Fraction(0))] for p in keys]
-    lead: list[int] = []
-    for n in range(len(columns)):
-        at = next((r for r in range(len(lead), len(rows)) if rows[r][n]), None)
-        if at is None:
-            continue
-        k = len(lead)
-        rows[k], rows[at] = rows[at], rows[k]
-        rows[k] = [x / rows[k][n] for x in rows[k]]
-        for r in range(len(rows)):
-            if r != k and rows[r][n]:
-                f = rows[r][n]
-                rows[r] = [x - f * y for x, y in zip(rows[r], rows[k], strict=True)]
-        lead.append(n)
+    lead = echelon(rows, len(columns))
     if any(r[-1] for r in rows[len(lead) :]):
         return None
     out = [Fraction(0)] * len(columns)
