@@ -20,7 +20,7 @@ from .ring import Poly
 Mono = tuple[int, ...]
 Coefficients = dict[Mono, Fraction]
 
-LARGEST_BASIS = 40
+LARGEST_BASIS = 24
 GRID = (0, 1, -1, 2, -2)
 LARGEST_GRID = 700
 ROUNDINGS = (10, 100, 10**4, 10**7)
@@ -111,7 +111,6 @@ def _gram(cs: Coefficients, basis: list[Mono], face: Matrix) -> Matrix | None:
     """A positive semidefinite rational Gram matrix of p, from the solver's by rounding: S in the
     coordinates of the face, with basis^T (face^T S face) basis = p."""
     r = len(face)
-    index = {m: i for i, m in enumerate(basis)}
     entries = [(i, j) for i in range(r) for j in range(i, r)]
     # coefficient of every product monomial as a linear form in the entries of S
     forms: dict[Mono, dict[int, Fraction]] = {}
@@ -136,16 +135,20 @@ def _gram(cs: Coefficients, basis: list[Mono], face: Matrix) -> Matrix | None:
         small = [[Fraction(0)] * r for _ in range(r)]
         for (i, j), x in zip(entries, s, strict=True):
             small[i][j] = small[j][i] = x
-        whole = [
-            [
-                sum((face[i][a] * small[i][j] * face[j][b] for i in range(r) for j in range(r)), Fraction(0))
-                for b in range(len(index))
-            ]
-            for a in range(len(index))
-        ]
         if _ldl(small) is not None:
-            return whole
+            return _unfolded(small, face)
     return None
+
+
+def _unfolded(small: Matrix, face: Matrix) -> Matrix:
+    """face^T small face."""
+    r, n = len(face), len(face[0])
+    half = [
+        [sum((small[i][j] * face[j][b] for j in range(r)), Fraction(0)) for b in range(n)] for i in range(r)
+    ]
+    return [
+        [sum((face[i][a] * half[i][b] for i in range(r)), Fraction(0)) for b in range(n)] for a in range(n)
+    ]
 
 
 def _solve(rows: Matrix, goal: list[Fraction], entries: list[tuple[int, int]], r: int) -> list[float] | None:
@@ -174,7 +177,7 @@ def _solve(rows: Matrix, goal: list[Fraction], entries: list[tuple[int, int]], r
     ]
     settings = clarabel.DefaultSettings()
     settings.verbose = False
-    settings.time_limit = 5.0
+    settings.time_limit = 2.0
     cost = np.zeros(n)
     cost[n - 1] = -1.0
     out = clarabel.DefaultSolver(sparse.csc_matrix((n, n)), cost, a, b, cones, settings).solve()
