@@ -269,3 +269,31 @@ def test_a_shape_may_meet_a_point_that_is_placed_before_it(shape: str) -> None:
 def test_a_point_before_a_shape_may_be_its_vertex() -> None:
     (sheet,) = read("given point P\ngiven square ABCD\nprovided not P, A distinct\nclaim |PB| = |AB|\n")
     assert decide(sheet)[0].verdict is Verdict.HOLDS
+
+
+CONCYCLIC = [
+    # coinciding points of one circle are on it: once `conditional`, false where two of them coincide
+    (
+        "given points O, A\ngiven k = circle with centre O through A\ngiven B on circle k\ngiven C on circle k\n"
+        "given D on circle k\n",
+        "A, B, C, D concyclic",
+        Verdict.HOLDS,
+    ),
+    # Thales, with D = P for P on AB
+    (
+        "given triangle ABC\ngiven point P\ngiven D = foot of P on AB\ngiven E = foot of P on AC\n",
+        "A, D, P, E concyclic",
+        Verdict.HOLDS,
+    ),
+    # four different points in line are on no circle
+    ("given points A, B, C, D\ngiven A, B, C collinear\n", "A, B, C, D concyclic", Verdict.FAILS),
+    ("given points A, B, C, D\ngiven A, B, C, D concyclic\n", "A, B, C collinear", Verdict.FAILS),
+]
+
+
+@pytest.mark.parametrize(
+    ("figure", "claim", "verdict"), CONCYCLIC, ids=[c[1] + str(i) for i, c in enumerate(CONCYCLIC)]
+)
+def test_coinciding_points_count_once_on_a_circle(figure: str, claim: str, verdict: Verdict) -> None:
+    (sheet,) = read(f"{figure}claim {claim}\n")
+    assert decided(sheet, 10.0)[0].verdict is verdict

@@ -90,17 +90,31 @@ def truth(c: Condition, j: Judge) -> bool:
         return any(truth(x, j) for x in c.args)
     if isinstance(c, Comparison):
         return all(compare(c.items[i], op, c.items[i + 1], j) for i, op in enumerate(c.ops))
+    if c.form == "concyclic":
+        return _on_some_circle(j, c.args[0])
     eqs = equations(c, j)
     if eqs is not None:
-        if c.form == "concyclic" and _in_row(j, c.args[0]):
-            return False
         return all(j.zero(e) for e in eqs)
     return CONDITIONS[c.form](j, *c.args)
 
 
-def _in_row(j: Judge, pts: Any) -> bool:
-    """Whether the first three points are collinear: they lie on no circle then."""
-    return j.zero(j.turn(*pts[:3]))
+def _on_some_circle(j: Judge, pts: Any) -> bool:
+    """Whether some circle carries all the points.
+
+    Coinciding points count once: where the first three are in line, those left are looked at, of
+    which one or two always have a circle and three in line have none.
+    """
+    if j.zero(j.turn(*pts[:3])):
+        apart: list[Pt] = []
+        for p in pts:
+            if not any(j.zero(j.gap2(p, q)) for q in apart):
+                apart.append(p)
+        if len(apart) < 3:
+            return True
+        if j.zero(j.turn(*apart[:3])):
+            return False
+        pts = apart
+    return all(j.zero(j.circle_test(pts[0], pts[1], pts[2], d)) for d in pts[3:])
 
 
 def compare(left: Any, op: str, right: Any, j: Judge) -> bool:
@@ -122,7 +136,8 @@ _OPEN = {
     "convex",
     "distinct",
 }
-_CLOSED = {*EQUATIONS, "on_segment", "on_ray", "is_equilateral", "is_isosceles"}
+# concyclic points may tend to points in line, which are on no circle
+_CLOSED = {*EQUATIONS, "on_segment", "on_ray", "is_equilateral", "is_isosceles"} - {"concyclic"}
 
 
 def is_open(c: Condition) -> bool:

@@ -15,7 +15,7 @@ from ..field import cells, ring, roots
 from ..field.real import branches
 from ..field.ring import Poly
 from ..field.tower import Element
-from ..sheet.tree import Comparison, Fact, Line, Pt, Relation, Sheet
+from ..sheet.tree import Comparison, Condition, Fact, Line, Relation, Sheet
 from .base import Base, plug, solve
 from .component import Builder, Component, Frame, Require, outcomes
 from .conditions import equations
@@ -122,6 +122,14 @@ class Program:
         return Component(base.tower, base.values, (), requires=tuple(requires))
 
 
+def demands(sheet: Sheet) -> list[Condition]:
+    """Conditions of admission: the `provided` lines, and concyclic points as a condition besides their
+    equation, which points in line satisfy too."""
+    circles = [line.body for line in sheet.given if isinstance(line.body, Relation)]
+    given: list[Condition] = [c for c in circles if c.form == "concyclic"]
+    return [*given, *(line.body for line in sheet.provided)]  # type: ignore[list-item]
+
+
 def frames_for(sheet: Sheet) -> list[str]:
     """The frames that can hold a sheet, by the shape that is placed first; half angles serve
     points anywhere on a circle too."""
@@ -156,10 +164,6 @@ def _action(line: Line) -> Callable[[Builder], None]:
 def _relate(b: Builder, rel: Relation, text: str) -> None:
     eqs = equations(rel, b)
     assert eqs is not None, rel.form
-    if rel.form == "concyclic":
-        names: tuple[Pt, ...] = rel.args[0]  # type: ignore[assignment]
-        first, second, third = names[:3]
-        b.require(b.turn(first, second, third), "!=", f"{first}, {second}, {third} collinear")
     for e in eqs:
         b.vanish(e, f"{text} cannot hold")
 

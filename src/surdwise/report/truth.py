@@ -22,7 +22,7 @@ from ..field.ring import PARAM_NAMES, Poly, TooLarge, param_slot, rational
 from ..field.sketch import Evaluator, Sketch, evaluator, quotient
 from ..figure.component import Component
 from ..figure.conditions import Judge, truth
-from ..figure.program import frames_for, program
+from ..figure.program import demands, frames_for, program
 from ..sheet.tree import Condition, Sheet
 from ..verdict.spot import FloatHint, Lone, Undefined
 from ..verdict.survey import OutOfTime, Surveyor
@@ -169,7 +169,7 @@ def sampler(
 
 def _in_frame(sheet: Sheet, claim: Condition, kind: str, deadline: float) -> Sampler | None:
     prog = program(sheet, kind)
-    bodies: list[Condition] = [line.body for line in sheet.provided]  # type: ignore[misc]
+    bodies = demands(sheet)
     conditions = [_statement(c) for c in bodies]
     surveyor = Surveyor(prog, conditions, [lambda j: truth(claim, j)], deadline, shallow=True)
     borders: list[Poly] = []

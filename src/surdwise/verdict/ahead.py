@@ -16,7 +16,7 @@ from itertools import islice
 from ..field import cells
 from ..field.real import Unsettled, branches
 from ..figure.component import Component
-from ..figure.program import Program, frames_for, program
+from ..figure.program import Program, demands, frames_for, program
 from ..sheet.tree import Comparison, Condition, Sheet
 from . import three_terms, triangles
 from .lemma import Lemma
@@ -60,7 +60,7 @@ def look_ahead(sheet: Sheet, claim: Condition, blank: Decision, tick: Callable[[
     if max((len(c.free) for c in comps), default=0) < MANY:
         return Ahead()
     look = _Look(sheet, prog, comps, tick)
-    conditions: list[Condition] = [line.body for line in sheet.provided]  # type: ignore[misc]
+    conditions = demands(sheet)
     found = Found()
     for c in links:
         if isinstance(c, Comparison) and c.ops[0] != "=":

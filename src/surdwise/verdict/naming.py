@@ -11,7 +11,7 @@ from ..field.ball import between, branch_parameters
 from ..field.real import Branch
 from ..figure.component import Component
 from ..figure.conditions import Judge, is_open, truth
-from ..figure.program import Program
+from ..figure.program import Program, demands
 from ..sheet.tree import Comparison, Condition, Relation, Sheet
 from .candidates import Candidate, candidates
 from .lemma import Lemma
@@ -83,8 +83,7 @@ class Case:
     ) -> Survey:
         """Survey all admitted figures (or open cells only; or those `where` conditions hold
         besides) for some statements."""
-        conditions: list[Condition] = [line.body for line in self.sheet.provided]  # type: ignore[misc]
-        conditions += where
+        conditions = [*demands(self.sheet), *where]
         return Surveyor(
             self.program,
             [self.statement(c) for c in conditions],
