@@ -274,8 +274,8 @@ def test_a_point_before_a_shape_may_be_its_vertex() -> None:
 CONCYCLIC = [
     # coinciding points of one circle are on it: once `conditional`, false where two of them coincide
     (
-        "given points O, A\ngiven k = circle with centre O through A\ngiven B on circle k\ngiven C on circle k\n"
-        "given D on circle k\n",
+        "given points O, A\ngiven k = circle with centre O through A\n"
+        "given B on circle k\ngiven C on circle k\ngiven D on circle k\n",
         "A, B, C, D concyclic",
         Verdict.HOLDS,
     ),
