@@ -10,16 +10,16 @@ from ..field.tower import Element
 from ..figure.component import Component
 from ..figure.conditions import truth
 from ..figure.program import frames_for, program
-from ..figure.vocabulary.placements import CARTESIAN, HALF_ANGLES
+from ..figure.vocabulary.placements import CARTESIAN, HALF_ANGLES, INCIRCLE
 from ..sheet.tree import Condition, Sheet
 from .samples import likely_samples
 from .spot import Register, Spot, Undefined
 
 SAMPLES = 200
-NO_FIGURE = (1 << 30, 0)
-# tangents of quarter angles cost in the projection what they save in roots: half-angle degrees count
+NO_FIGURE = (1e30, 0)
+# parameters that are tangents cost in the projection what they save in roots: their degrees count
 # this much more (least total time over the triangle inequalities of the tests and bench/)
-WEIGHT = {HALF_ANGLES: 6}
+WEIGHT = {HALF_ANGLES: 24.0, INCIRCLE: 1.9}
 
 
 class Trial(Spot):
@@ -45,9 +45,10 @@ def frames_by_cost(sheet: Sheet, claim: Condition) -> list[str]:
     return sorted(kinds, key=lambda k: (_cost(sheet, claim, k), kinds.index(k)))
 
 
-def _cost(sheet: Sheet, claim: Condition, kind: str) -> tuple[int, int]:
-    """Predicted degree of the largest border of the claim, and the degree of the tower that
-    reading it needs; a trial, not a bound."""
+def _cost(sheet: Sheet, claim: Condition, kind: str) -> tuple[float, int]:
+    """Predicted degree of the largest border of the claim, weighted, and the degree of the tower that
+    reading it needs; a trial, not a bound.  With more than two parameters roots count once more for
+    each."""
     run = program(sheet, kind).run()
     if not run.components:
         return NO_FIGURE
@@ -59,7 +60,8 @@ def _cost(sheet: Sheet, claim: Condition, kind: str) -> tuple[int, int]:
         with suppress(Unsettled, Undefined):
             truth(claim, trial)
         worst = max(worst, (trial.worst, comp.tower.degree))
-    return worst[0] * WEIGHT.get(kind, 1), worst[1]
+    more = max(max(len(c.free) for c in run.components) - 2, 0)
+    return int(worst[0]) * WEIGHT.get(kind, 1.0) * int(worst[1]) ** more, int(worst[1])
 
 
 def _trial(comp: Component) -> Trial | None:
