@@ -6,6 +6,7 @@ or 9 where the figure is too near to a border to call, or 8 where something is u
 
 from __future__ import annotations
 
+import itertools
 from typing import Any
 
 from surdwise.sheet.tree import And, Binary, Comparison, Measure, Not, Number, Or, Relation, Unary
@@ -238,7 +239,23 @@ def _collinear(g: Any, names: Any) -> Any:
 
 
 def _concyclic(g: Any, names: Any) -> Any:
-    a, b, c, *rest = (g.at(x) for x in names)
+    """On some circle; coinciding points count once.  Three that are not in line decide the circle; where
+    no three are, two of every three must coincide."""
+    p = [g.at(x) for x in names]
+    triples = list(itertools.combinations(p, 3))
+    out = _all(
+        g, [either(either(same(g, a, b), same(g, b, c), g.ops), same(g, a, c), g.ops) for a, b, c in triples]
+    )
+    for base in reversed(triples):
+        flat = turn(g, *base)
+        on = _on_circle_of(g, base, p)
+        out = g.ops.where(flat == 0, out, g.ops.where(flat >= 8, flat, on))
+    return out
+
+
+def _on_circle_of(g: Any, base: Any, rest: Any) -> Any:
+    """On the circle through three points; false where they are in line."""
+    a, b, c = base
     flat = turn(g, a, b, c)
     u, v = b - a, c - a
     w = 2 * cross(u, v)
@@ -358,7 +375,7 @@ def _on_ray(g: Any, p: Any, pair: Any) -> Any:
 
 def _on_circle(g: Any, p: Any, k: Any) -> Any:
     if hasattr(k, "points"):
-        return _concyclic(g, (*k.points, p))
+        return _on_circle_of(g, [g.at(x) for x in k.points], [g.at(p)])
     _kind, o, r2 = g.curves[k.name]
     y2 = dot(g.at(p) - o, g.at(p) - o)
     return _zero(g, g.ops.sign(y2 - r2, y2 + r2 + dot(o, o) + TINY))

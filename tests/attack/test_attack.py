@@ -33,7 +33,5 @@ def all_sheets() -> list[tuple[str, Sheet]]:
 @pytest.mark.parametrize("sheet", [pytest.param(s, id=name) for name, s in all_sheets()])
 def test_decisions(sheet: Sheet) -> None:
     for i, d in enumerate(decided(sheet, SECONDS)):
-        # the float code reads `concyclic` as false where two of the points coincide, the program as
-        # true: conditions in that word are left to tests/verdict
-        found = [c for c in complaints(sheet, i, d, FIGURES) if "concyclic` is" not in c]
+        found = complaints(sheet, i, d, FIGURES)
         assert not found, (d.claim, d.verdict.value, d.condition, found[:4])
